@@ -47,7 +47,7 @@ public final class TrialTally implements Serializable {
 
     /** Adds the other's counts to this one; the other does not change. */
     public void merge(TrialTally other) {
-        (other == this ? new TreeMap<>(other.counts) : other.counts).forEach(this::add);
+        new TreeMap<>(other.counts).forEach(this::add);
     }
 
     /** The counts, in canonical order; a view that cannot be written to. */
