@@ -27,7 +27,9 @@ public final class Start {
         String talk = System.getProperty("turnstone.talk");
         if (talk != null) {
             System.setErr(new PrintStream(
-                    new FileOutputStream(descriptor(Integer.parseInt(talk))), true, System.getProperty("stderr.encoding", "UTF-8")));
+                    new FileOutputStream(descriptor(Integer.parseInt(talk))),
+                    true,
+                    System.getProperty("stderr.encoding", "UTF-8")));
         }
         Class<?> main = Class.forName(arguments[0], true, Thread.currentThread().getContextClassLoader());
         try {
