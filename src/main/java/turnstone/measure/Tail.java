@@ -1,0 +1,198 @@
+package turnstone.measure;
+
+import java.io.Serializable;
+import java.math.BigInteger;
+import java.util.ArrayList;
+import java.util.Arrays;
+import java.util.List;
+import java.util.Map;
+import java.util.TreeMap;
+import turnstone.fault.Fault;
+
+/**
+ * The linear tail of the pretreatment as one sparse matrix T of exact fractions, {@link #outputs} × {@link #inputs}. Immutable.
+ *
+ * <p>Row i is Σ_k numerators(i)[k]/denominator(i) · x[columns(i)[k]], columns ascending, no zero among the numerators, the fraction of the row in lowest terms. Meant for
+ * sums: T·P·Tᵀ at refit, Tᵀw for the weights; records never pay for it.
+ */
+public final class Tail implements Serializable {
+    private final int inputs;
+    private final int[][] columns;
+    private final long[][] numerators;
+    private final long[] denominators;
+
+    private Tail(int inputs, List<TreeMap<Integer, Fraction>> rows) {
+        this.inputs = inputs;
+        columns = new int[rows.size()][];
+        numerators = new long[rows.size()][];
+        denominators = new long[rows.size()];
+        for (int i = 0; i < rows.size(); i++) {
+            place(i, rows.get(i));
+        }
+    }
+
+    private void place(int i, TreeMap<Integer, Fraction> row) {
+        BigInteger common = BigInteger.ONE;
+        for (Fraction weight : row.values()) {
+            common = common.divide(common.gcd(weight.denominator())).multiply(weight.denominator());
+        }
+        columns[i] = row.keySet().stream().mapToInt(Integer::intValue).toArray();
+        numerators[i] = new long[row.size()];
+        denominators[i] = word(common);
+        int k = 0;
+        for (Fraction weight : row.values()) {
+            numerators[i][k++] = word(weight.numerator().multiply(common.divide(weight.denominator())));
+        }
+    }
+
+    private static long word(BigInteger value) {
+        if (value.bitLength() > 63) {
+            throw Fault.usage("the exact weights of the tail pass 63 bits")
+                    .at("pretreatment tail")
+                    .found(value.bitLength() + " bits")
+                    .remedy("take a shorter window or a lower order, or fewer steps");
+        }
+        return value.longValueExact();
+    }
+
+    /** T = I. */
+    public static Tail identity(int channels) {
+        return new Tail(channels, identityRows(channels));
+    }
+
+    /**
+     * The steps composed in their order.
+     *
+     * @throws Fault of kind usage where a step doesn't fit the channels that reach it, or exact weights pass 63 bits
+     */
+    public static Tail of(TailSpec spec, int channels) {
+        if (channels < 1) {
+            throw new IllegalArgumentException("a tail needs at least one channel, not " + channels);
+        }
+        spec.outputs(channels);
+        List<TreeMap<Integer, Fraction>> rows = identityRows(channels);
+        for (TailSpec.Step step : spec.steps()) {
+            rows = compose(step, rows);
+        }
+        return new Tail(channels, rows);
+    }
+
+    private static List<TreeMap<Integer, Fraction>> identityRows(int channels) {
+        List<TreeMap<Integer, Fraction>> rows = new ArrayList<>();
+        for (int c = 0; c < channels; c++) {
+            TreeMap<Integer, Fraction> row = new TreeMap<>();
+            row.put(c, Fraction.ONE);
+            rows.add(row);
+        }
+        return rows;
+    }
+
+    private static List<TreeMap<Integer, Fraction>> compose(TailSpec.Step step, List<TreeMap<Integer, Fraction>> rows) {
+        List<TreeMap<Integer, Fraction>> result = new ArrayList<>();
+        if (step instanceof TailSpec.SavitzkyGolay smooth) {
+            Fraction[] weights = SavitzkyGolayWeights.of(smooth);
+            for (int i = 0; i + weights.length <= rows.size(); i++) {
+                result.add(combine(weights, rows.subList(i, i + weights.length)));
+            }
+        } else if (step instanceof TailSpec.Bins bins) {
+            for (int i = 0; i < rows.size(); i += bins.width()) {
+                List<TreeMap<Integer, Fraction>> bin = rows.subList(i, Math.min(i + bins.width(), rows.size()));
+                Fraction[] weights = new Fraction[bin.size()];
+                Arrays.fill(weights, Fraction.of(1, bin.size()));
+                result.add(combine(weights, bin));
+            }
+        } else if (step instanceof TailSpec.Mask mask) {
+            result.addAll(rows.subList(0, mask.first()));
+            result.addAll(rows.subList(mask.last() + 1, rows.size()));
+        }
+        return result;
+    }
+
+    private static TreeMap<Integer, Fraction> combine(Fraction[] weights, List<TreeMap<Integer, Fraction>> rows) {
+        TreeMap<Integer, Fraction> sum = new TreeMap<>();
+        for (int k = 0; k < weights.length; k++) {
+            if (weights[k].isZero()) {
+                continue;
+            }
+            for (Map.Entry<Integer, Fraction> entry : rows.get(k).entrySet()) {
+                sum.merge(entry.getKey(), entry.getValue().times(weights[k]), Fraction::plus);
+            }
+        }
+        sum.values().removeIf(Fraction::isZero);
+        return sum;
+    }
+
+    /** Channels that go in. */
+    public int inputs() {
+        return inputs;
+    }
+
+    /** Channels that come out. */
+    public int outputs() {
+        return columns.length;
+    }
+
+    /** Whether T = I. */
+    public boolean isIdentity() {
+        if (inputs != columns.length) {
+            return false;
+        }
+        for (int i = 0; i < inputs; i++) {
+            boolean unit =
+                    columns[i].length == 1 && columns[i][0] == i && numerators[i][0] == 1 && denominators[i] == 1;
+            if (!unit) {
+                return false;
+            }
+        }
+        return true;
+    }
+
+    /** The input channels of a row, ascending. */
+    public int[] columns(int row) {
+        return columns[row].clone();
+    }
+
+    /** The numerators of a row, in the order of {@link #columns(int)}. */
+    public long[] numerators(int row) {
+        return numerators[row].clone();
+    }
+
+    /** The denominator of a row, above 0. */
+    public long denominator(int row) {
+        return denominators[row];
+    }
+
+    /** T·x in doubles: the products added in the order of the columns, then one division. */
+    public double[] apply(double[] x) {
+        checkLength(x.length);
+        double[] result = new double[outputs()];
+        for (int i = 0; i < result.length; i++) {
+            double sum = 0;
+            for (int k = 0; k < columns[i].length; k++) {
+                sum += (double) numerators[i][k] * x[columns[i][k]];
+            }
+            result[i] = sum / denominators[i];
+        }
+        return result;
+    }
+
+    /** The numerators of T·x, exactly: output i is the result's element i over {@link #denominator}(i). */
+    public BigInteger[] applyExactly(BigInteger[] x) {
+        checkLength(x.length);
+        BigInteger[] result = new BigInteger[outputs()];
+        for (int i = 0; i < result.length; i++) {
+            BigInteger sum = BigInteger.ZERO;
+            for (int k = 0; k < columns[i].length; k++) {
+                sum = sum.add(BigInteger.valueOf(numerators[i][k]).multiply(x[columns[i][k]]));
+            }
+            result[i] = sum;
+        }
+        return result;
+    }
+
+    private void checkLength(int length) {
+        if (length != inputs) {
+            throw new IllegalArgumentException("a tail of " + inputs + " channels was given " + length);
+        }
+    }
+}
