@@ -35,7 +35,7 @@ build() {
     local target=$home/target log=$home/target/build.log code maven
     maven=$(command -v mvn) || stop 2 "Maven is needed to build (mvn is not on PATH); install Maven 3.8 or later"
     [ -x "$java_home/bin/javac" ] || stop 2 "$java_home has no javac: building needs a JDK, not only a Java runtime"
-    if [ -f "$target/turnstone.stamp" ]; then
+    if [ -f "$target/turnstone.jar" ]; then
         say "sources changed, building…"
     else
         say "building (first use, takes a minute)…"
