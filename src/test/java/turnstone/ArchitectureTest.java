@@ -1,8 +1,8 @@
 package turnstone;
 
 import static com.tngtech.archunit.base.DescribedPredicate.not;
-import static com.tngtech.archunit.core.domain.JavaClass.Predicates.resideInAnyPackage;
 import static com.tngtech.archunit.core.domain.JavaClass.Predicates.resideInAPackage;
+import static com.tngtech.archunit.core.domain.JavaClass.Predicates.resideInAnyPackage;
 import static com.tngtech.archunit.lang.syntax.ArchRuleDefinition.classes;
 import static com.tngtech.archunit.lang.syntax.ArchRuleDefinition.methods;
 import static com.tngtech.archunit.lang.syntax.ArchRuleDefinition.noClasses;
@@ -57,17 +57,18 @@ class ArchitectureTest {
             Map.entry(
                     "spark",
                     Set.of(
-                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit", "trial", "sample")),
+                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
+                            "trial", "sample")),
             Map.entry(
                     "night",
                     Set.of(
-                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit", "trial", "sample",
-                            "spark")),
+                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
+                            "trial", "sample", "spark")),
             Map.entry(
                     "cli",
                     Set.of(
-                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit", "trial", "sample",
-                            "spark", "night")));
+                            "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
+                            "trial", "sample", "spark", "night")));
 
     private static final Set<String> ON_THE_ENGINE = Set.of("spark", "night", "cli");
 
@@ -83,7 +84,8 @@ class ArchitectureTest {
 
     private static Set<String> packagesInUse() {
         return sources()
-                .map(file -> MAIN.resolve("turnstone").relativize(file.getParent()).toString())
+                .map(file ->
+                        MAIN.resolve("turnstone").relativize(file.getParent()).toString())
                 .collect(toSet());
     }
 
@@ -95,16 +97,16 @@ class ArchitectureTest {
 
     @TestFactory
     Stream<DynamicTest> aPackageUsesOnlyThoseItMay() {
-        return packagesInUse().stream().sorted().map(name -> DynamicTest.dynamicTest(name, () -> arrowsOf(name)
-                .check(PROGRAM)));
+        return packagesInUse().stream()
+                .sorted()
+                .map(name -> DynamicTest.dynamicTest(name, () -> arrowsOf(name).check(PROGRAM)));
     }
 
     private static ArchRule arrowsOf(String name) {
         String[] allowed = Stream.concat(Stream.of(name, "fault", "json"), ARROWS.getOrDefault(name, Set.of()).stream())
                 .map(ArchitectureTest::inProgram)
                 .toArray(String[]::new);
-        DescribedPredicate<JavaClass> others =
-                resideInAPackage("turnstone..").and(not(resideInAnyPackage(allowed)));
+        DescribedPredicate<JavaClass> others = resideInAPackage("turnstone..").and(not(resideInAnyPackage(allowed)));
         return noClasses()
                 .that()
                 .resideInAPackage(inProgram(name))
@@ -151,7 +153,8 @@ class ArchitectureTest {
     @Test
     void everyPackageSaysWhatItOwns() {
         assertThat(packagesInUse())
-                .allSatisfy(name -> assertThat(MAIN.resolve("turnstone").resolve(name).resolve("package-info.java"))
+                .allSatisfy(name -> assertThat(
+                                MAIN.resolve("turnstone").resolve(name).resolve("package-info.java"))
                         .content()
                         .contains("/**", "package turnstone." + name + ";"));
     }
@@ -215,7 +218,8 @@ class ArchitectureTest {
                                         item.getOwner().getAllRawInterfaces().stream())
                                 .anyMatch(above -> !above.getPackageName().startsWith("turnstone")
                                         && above.getMethods().stream()
-                                                .anyMatch(other -> other.getName().equals(item.getName())));
+                                                .anyMatch(
+                                                        other -> other.getName().equals(item.getName())));
                         events.add(new SimpleConditionEvent(item, inherited, item.getDescription() + " is called get"));
                     }
                 })

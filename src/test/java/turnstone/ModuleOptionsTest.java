@@ -34,6 +34,7 @@ class ModuleOptionsTest {
     @Test
     void theLauncherTakesThemFromThePom() throws Exception {
         Path options = Path.of(System.getProperty("turnstone.basedir"), "src/main/engine/jvm.options");
-        assertThat(Files.readString(options, StandardCharsets.UTF_8)).isEqualToIgnoringNewLines("${spark.module.options}");
+        assertThat(Files.readString(options, StandardCharsets.UTF_8))
+                .isEqualToIgnoringNewLines("${spark.module.options}");
     }
 }
