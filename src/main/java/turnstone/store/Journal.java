@@ -19,45 +19,36 @@ import turnstone.json.Json;
  * <caption>Keys that the journal adds</caption>
  * <tr><th>key</th><th>content</th></tr>
  * <tr><td>{@code number}</td><td>its number, from 1</td></tr>
- * <tr><td>{@code previous}</td><td>SHA-256 of the bytes of the entry before, or the journal's start for the first</td></tr>
+ * <tr><td>{@code previous}</td><td>SHA-256 of the bytes of the entry before; 64 zeros in the first</td></tr>
  * <tr><td>{@code writer}</td><td>a name made anew for each attempt, so that no two attempts write the same bytes</td></tr>
  * <tr><td>{@code check}</td><td>SHA-256 of the canonical form of all the rest</td></tr>
  * </table>
  *
- * <p>An altered entry is noticed by its {@code check} or by the next one's {@code previous}; a swapped one likewise; a missing one by a
- * later one that is there. That the newest entries were taken away whole can't be noticed from the journal alone.
+ * <p>An altered entry is noticed by its {@code check}, a replaced one by the next one's {@code previous}, one under another's number by
+ * its {@code number}, a missing one by a later one that is there. That the newest entries were taken away whole can't be noticed from
+ * the journal alone.
  */
 public final class Journal {
-    /** SHA-256 that stands before the first entry where the journal has nothing to hang on. */
-    public static final String NO_START = "0".repeat(64);
+    private static final String NOTHING_BEFORE = "0".repeat(64);
 
     /** How far behind the first missing number a reader looks for a later one: one look is cheap, and holes are rare. */
     private static final int LOOK_AHEAD = 4;
-    /** How far {@link #verify} looks: far enough for a few years of nights taken away. */
-    private static final int LOOK_AHEAD_VERIFYING = 1000;
+    /** How far {@link #scan} looks: far enough for a few years of nights taken away. */
+    private static final int LOOK_AHEAD_SCANNING = 1000;
 
     private static final List<String> OWN_KEYS = List.of("number", "previous", "writer", "check");
 
     private final Store store;
     private final String folder;
-    private final String start;
 
-    private Journal(Store store, String folder, String start) {
+    private Journal(Store store, String folder) {
         this.store = store;
         this.folder = Names.check(folder);
-        this.start = start;
     }
 
-    /**
-     * The journal in a folder of a store; nothing is read or written yet.
-     *
-     * @param start SHA-256 of the file that the journal hangs on, or {@link #NO_START}
-     */
-    public static Journal in(Store store, String folder, String start) {
-        if (!Digests.isSha256(start)) {
-            throw new IllegalArgumentException("not a SHA-256: " + start);
-        }
-        return new Journal(store, folder, start);
+    /** The journal in a folder of a store; nothing is read or written yet. */
+    public static Journal in(Store store, String folder) {
+        return new Journal(store, folder);
     }
 
     /** The name in the store of entry {@code number}. */
@@ -77,31 +68,30 @@ public final class Journal {
         return entriesAfter(List.of());
     }
 
-    /** The entries given, which are the first ones, and all that have been added since. */
+    /**
+     * The entries given and all that have been added since.
+     *
+     * @param known the first entries, as read before
+     */
     public List<JournalEntry> entriesAfter(List<JournalEntry> known) {
-        List<JournalEntry> entries = new ArrayList<>(known);
-        while (true) {
-            long number = entries.size() + 1L;
-            Optional<byte[]> content = store.read(name(number));
-            if (content.isEmpty()) {
-                if (missingBefore(number, LOOK_AHEAD).isEmpty()) {
-                    return List.copyOf(entries);
-                }
-                // A later one is there. Perhaps both came since the look: only a second look makes the hole certain.
-                content = store.read(name(number));
-                if (content.isEmpty()) {
-                    throw notAsWritten(new Problem(
-                            name(number), Problem.Trouble.MISSING, "an entry before later ones", "nothing"));
-                }
-            }
-            String previous =
-                    entries.isEmpty() ? start : entries.get(entries.size() - 1).sha256();
-            entries.add(parse(number, content.get(), previous));
+        JournalScan scan = scan(known, LOOK_AHEAD);
+        for (Problem problem : scan.problems()) {
+            throw Fault.storage("not what was written: " + problem.trouble().label())
+                    .at(store.place(problem.file()))
+                    .found(problem.found())
+                    .expected(problem.expected())
+                    .remedy("restore the file from a copy, then run verify");
         }
+        return scan.entries();
+    }
+
+    /** Reads everything again; tells what is whole and names what isn't. */
+    public JournalScan scan() {
+        return scan(List.of(), LOOK_AHEAD_SCANNING);
     }
 
     /**
-     * Publishes entry {@code number} = one more than the newest that the caller has seen.
+     * Publishes the entry after {@code newest}.
      *
      * @param newest the newest entry that the caller has seen, or empty where there was none
      * @param content what the entry says; the journal's own keys are added
@@ -116,82 +106,76 @@ public final class Journal {
         long number = newest.map(JournalEntry::number).orElse(0L) + 1;
         ObjectNode entry = Json.object()
                 .put("number", number)
-                .put("previous", newest.map(JournalEntry::sha256).orElse(start))
+                .put("previous", newest.map(JournalEntry::sha256).orElse(NOTHING_BEFORE))
                 .put("writer", RunNames.fresh());
         entry.setAll(content);
         entry.put("check", Json.fingerprint(entry));
         return store.publish(name(number), Json.pretty(entry));
     }
 
-    /** Reads everything again and names each entry that is missing or not what was written. */
-    public List<Problem> verify() {
+    private JournalScan scan(List<JournalEntry> known, int lookAhead) {
+        List<JournalEntry> entries = new ArrayList<>(known);
         List<Problem> problems = new ArrayList<>();
-        String previous = start;
-        for (long number = 1; ; number++) {
+        // Null: the entry before is missing or has a problem of its own, so the link to it tells nothing new.
+        String before =
+                known.isEmpty() ? NOTHING_BEFORE : known.get(known.size() - 1).sha256();
+        for (long number = known.size() + 1L; ; number++) {
             Optional<byte[]> content = store.read(name(number));
             if (content.isEmpty()) {
-                if (missingBefore(number, LOOK_AHEAD_VERIFYING).isEmpty()) {
-                    return problems;
+                if (!laterThan(number, lookAhead)) {
+                    return new JournalScan(entries, problems);
                 }
-                problems.add(
-                        new Problem(name(number), Problem.Trouble.MISSING, "an entry before later ones", "nothing"));
-                previous = null;
+                // Perhaps both came since the first look: a second look makes the hole certain.
+                content = store.read(name(number));
+            }
+            Optional<Problem> problem = content.isEmpty() ? missing(number) : flaw(number, content.get());
+            if (problem.isPresent()) {
+                problems.add(problem.get());
+                before = null;
                 continue;
             }
-            check(number, content.get(), previous).ifPresent(problems::add);
-            previous = Json.sha256(content.get());
+            ObjectNode node = (ObjectNode) Json.read(content.get(), name(number));
+            String previous = node.path("previous").asText();
+            if (before != null && !before.equals(previous)) {
+                problems.add(replaced(number, previous, before));
+            }
+            before = Json.sha256(content.get());
+            entries.add(new JournalEntry(number, before, node.without(OWN_KEYS)));
         }
     }
 
-    private Optional<Long> missingBefore(long number, int lookAhead) {
+    private boolean laterThan(long number, int lookAhead) {
         for (long later = number + 1; later <= number + lookAhead; later++) {
             if (store.size(name(later)).isPresent()) {
-                return Optional.of(later);
+                return true;
             }
         }
-        return Optional.empty();
+        return false;
     }
 
-    private JournalEntry parse(long number, byte[] content, String previous) {
-        Optional<Problem> problem = check(number, content, previous);
-        if (problem.isPresent()) {
-            throw notAsWritten(problem.get());
-        }
-        ObjectNode node = (ObjectNode) Json.read(content, store.place(name(number)));
-        return new JournalEntry(number, Json.sha256(content), node.without(OWN_KEYS));
-    }
-
-    /** Null for {@code previous} means: not known, because that entry is missing. */
-    private Optional<Problem> check(long number, byte[] content, String previous) {
-        String name = name(number);
-        Optional<ObjectNode> parsed = object(content, name);
+    /** What is wrong with an entry by itself. */
+    private Optional<Problem> flaw(long number, byte[] content) {
+        Optional<ObjectNode> parsed = object(content, name(number));
         if (parsed.isEmpty()) {
-            return altered(name, "an entry of a journal", "other text of SHA-256 " + Json.sha256(content));
+            return altered(number, "an entry of a journal", "other text of SHA-256 " + Json.sha256(content));
         }
         ObjectNode entry = parsed.get();
         String stated = entry.path("check").asText();
         String computed = Json.fingerprint(entry.deepCopy().without("check"));
         if (!stated.equals(computed)) {
-            return altered(name, "check " + stated, computed);
+            return altered(number, "content of SHA-256 " + stated, computed);
         }
         if (!Arrays.equals(content, Json.pretty(entry))) {
-            return altered(name, "the bytes of its form", "another form of the same content");
+            return altered(number, "the form that it was written in", "the same content in another form");
         }
         if (entry.path("number").asLong() != number) {
             return altered(
-                    name, "number " + number, "number " + entry.path("number").asText());
-        }
-        String before = entry.path("previous").asText();
-        if (previous != null && !before.equals(previous)) {
-            return altered(
-                    name,
-                    "previous " + previous,
-                    "previous " + before + ": this entry or the one before it was changed");
+                    number, "number " + number, "number " + entry.path("number").asText());
         }
         return Optional.empty();
     }
 
-    private Optional<ObjectNode> object(byte[] content, String name) {
+    private static Optional<ObjectNode> object(byte[] content, String name) {
         try {
             return Json.read(content, name) instanceof ObjectNode node ? Optional.of(node) : Optional.empty();
         } catch (Fault notJson) {
@@ -199,15 +183,18 @@ public final class Journal {
         }
     }
 
-    private static Optional<Problem> altered(String name, String expected, String found) {
-        return Optional.of(new Problem(name, Problem.Trouble.ALTERED, expected, found));
+    private Optional<Problem> missing(long number) {
+        return Optional.of(new Problem(name(number), Problem.Trouble.MISSING, "an entry before later ones", "nothing"));
     }
 
-    private Fault notAsWritten(Problem problem) {
-        return Fault.storage("not what was written: " + problem.trouble().label())
-                .at(store.place(problem.file()))
-                .found(problem.found())
-                .expected(problem.expected())
-                .remedy("restore the file from a copy, then run verify");
+    private Optional<Problem> altered(long number, String expected, String found) {
+        return Optional.of(new Problem(name(number), Problem.Trouble.ALTERED, expected, found));
+    }
+
+    /** Entry {@code number} is whole and remembers another one before it. */
+    private Problem replaced(long number, String remembered, String there) {
+        return number == 1
+                ? new Problem(name(1), Problem.Trouble.ALTERED, "the first entry", "one that follows another")
+                : new Problem(name(number - 1), Problem.Trouble.ALTERED, "SHA-256 " + remembered, there);
     }
 }

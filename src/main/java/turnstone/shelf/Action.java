@@ -1,0 +1,29 @@
+package turnstone.shelf;
+
+/** What an entry of the shelf's journal does. */
+public enum Action {
+    /** Puts a model in service. */
+    RELEASE("release"),
+    /** Puts the model that was in service before the current one back. */
+    REVERT("revert");
+
+    private final String label;
+
+    Action(String label) {
+        this.label = label;
+    }
+
+    /** The word in files and messages. */
+    public String label() {
+        return label;
+    }
+
+    static Action of(String label) {
+        for (Action action : values()) {
+            if (action.label.equals(label)) {
+                return action;
+            }
+        }
+        throw new IllegalArgumentException("no action is called " + label);
+    }
+}
