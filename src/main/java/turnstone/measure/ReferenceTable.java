@@ -15,9 +15,9 @@ import turnstone.fault.Fault;
  * counts, one per channel of the instrument.
  */
 public final class ReferenceTable implements Serializable {
-    private final TreeMap<String, TreeMap<Integer, ReferenceSeries>> bySorter;
+    private final TreeMap<String, Map<Integer, ReferenceSeries>> bySorter;
 
-    private ReferenceTable(Map<String, TreeMap<Integer, ReferenceSeries>> bySorter) {
+    private ReferenceTable(Map<String, Map<Integer, ReferenceSeries>> bySorter) {
         this.bySorter = new TreeMap<>(bySorter);
     }
 
@@ -33,7 +33,7 @@ public final class ReferenceTable implements Serializable {
 
     /** The references taken from one time (included) to another (not included): those of one instrument, where a sorter's optics changed. */
     public ReferenceTable within(long from_ms, long to_ms) {
-        TreeMap<String, TreeMap<Integer, ReferenceSeries>> kept = new TreeMap<>();
+        TreeMap<String, Map<Integer, ReferenceSeries>> kept = new TreeMap<>();
         bySorter.forEach((sorter, columns) -> columns.forEach((column, series) -> {
             ReferenceSeries part = series.within(from_ms, to_ms);
             if (part.size() > 0) {
@@ -79,7 +79,7 @@ public final class ReferenceTable implements Serializable {
          * @throws Fault of kind input where two references have the same kind, sorter, belt column and time
          */
         public ReferenceTable build() {
-            TreeMap<String, TreeMap<Integer, ReferenceSeries>> table = new TreeMap<>();
+            TreeMap<String, Map<Integer, ReferenceSeries>> table = new TreeMap<>();
             for (Map.Entry<String, TreeMap<Integer, List<ReferenceSeries.Entry>>> sorter : entries.entrySet()) {
                 TreeMap<Integer, ReferenceSeries> columns = new TreeMap<>();
                 for (Map.Entry<Integer, List<ReferenceSeries.Entry>> column :

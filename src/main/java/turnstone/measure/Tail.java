@@ -21,7 +21,7 @@ public final class Tail implements Serializable {
     private final long[][] numerators;
     private final long[] denominators;
 
-    private Tail(int inputs, List<TreeMap<Integer, Fraction>> rows) {
+    private Tail(int inputs, List<Map<Integer, Fraction>> rows) {
         this.inputs = inputs;
         columns = new int[rows.size()][];
         numerators = new long[rows.size()][];
@@ -31,7 +31,7 @@ public final class Tail implements Serializable {
         }
     }
 
-    private void place(int i, TreeMap<Integer, Fraction> row) {
+    private void place(int i, Map<Integer, Fraction> row) {
         BigInteger common = BigInteger.ONE;
         for (Fraction weight : row.values()) {
             common = common.divide(common.gcd(weight.denominator())).multiply(weight.denominator());
@@ -70,15 +70,15 @@ public final class Tail implements Serializable {
             throw new IllegalArgumentException("a tail needs at least one channel, not " + channels);
         }
         spec.outputs(channels);
-        List<TreeMap<Integer, Fraction>> rows = identityRows(channels);
+        List<Map<Integer, Fraction>> rows = identityRows(channels);
         for (TailSpec.Step step : spec.steps()) {
             rows = compose(step, rows);
         }
         return new Tail(channels, rows);
     }
 
-    private static List<TreeMap<Integer, Fraction>> identityRows(int channels) {
-        List<TreeMap<Integer, Fraction>> rows = new ArrayList<>();
+    private static List<Map<Integer, Fraction>> identityRows(int channels) {
+        List<Map<Integer, Fraction>> rows = new ArrayList<>();
         for (int c = 0; c < channels; c++) {
             TreeMap<Integer, Fraction> row = new TreeMap<>();
             row.put(c, Fraction.ONE);
@@ -87,8 +87,8 @@ public final class Tail implements Serializable {
         return rows;
     }
 
-    private static List<TreeMap<Integer, Fraction>> compose(TailSpec.Step step, List<TreeMap<Integer, Fraction>> rows) {
-        List<TreeMap<Integer, Fraction>> result = new ArrayList<>();
+    private static List<Map<Integer, Fraction>> compose(TailSpec.Step step, List<Map<Integer, Fraction>> rows) {
+        List<Map<Integer, Fraction>> result = new ArrayList<>();
         if (step instanceof TailSpec.SavitzkyGolay smooth) {
             Fraction[] weights = SavitzkyGolayWeights.of(smooth);
             for (int i = 0; i + weights.length <= rows.size(); i++) {
@@ -96,7 +96,7 @@ public final class Tail implements Serializable {
             }
         } else if (step instanceof TailSpec.Bins bins) {
             for (int i = 0; i < rows.size(); i += bins.width()) {
-                List<TreeMap<Integer, Fraction>> bin = rows.subList(i, Math.min(i + bins.width(), rows.size()));
+                List<Map<Integer, Fraction>> bin = rows.subList(i, Math.min(i + bins.width(), rows.size()));
                 Fraction[] weights = new Fraction[bin.size()];
                 Arrays.fill(weights, Fraction.of(1, bin.size()));
                 result.add(combine(weights, bin));
@@ -108,7 +108,7 @@ public final class Tail implements Serializable {
         return result;
     }
 
-    private static TreeMap<Integer, Fraction> combine(Fraction[] weights, List<TreeMap<Integer, Fraction>> rows) {
+    private static Map<Integer, Fraction> combine(Fraction[] weights, List<Map<Integer, Fraction>> rows) {
         TreeMap<Integer, Fraction> sum = new TreeMap<>();
         for (int k = 0; k < weights.length; k++) {
             if (weights[k].isZero()) {
