@@ -32,7 +32,7 @@ public final class Main {
         boolean terminal = "yes".equals(System.getProperty("turnstone.terminal"));
         Talk talk = new Talk(err, terminal ? Talk.Screen.TERMINAL : Talk.Screen.PLAIN);
         boolean trace = List.of(arguments).contains("--trace");
-        CommandLine line = new CommandLine(new Turnstone(), new Commands(out, talk));
+        CommandLine line = Commands.line(new Console(out, talk));
         line.setOut(new PrintWriter(out, true, StandardCharsets.UTF_8));
         line.setErr(new PrintWriter(err, true, StandardCharsets.UTF_8));
         line.setUsageHelpAutoWidth(false);

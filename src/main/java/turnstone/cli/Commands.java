@@ -1,0 +1,12 @@
+package turnstone.cli;
+
+import picocli.CommandLine;
+
+/** All commands, in the order of the help text. */
+final class Commands {
+    private Commands() {}
+
+    static CommandLine line(Console console) {
+        return new CommandLine(new Turnstone());
+    }
+}
