@@ -7,6 +7,7 @@ import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import turnstone.fault.Fault;
+import turnstone.fisher.Fit;
 import turnstone.json.Json;
 import turnstone.measure.CountScale;
 
@@ -71,6 +72,11 @@ public final class Model {
                 : OptionalDouble.of(ModelNumbers.number(beyond, "decision.unfamiliarBeyond"));
         JsonNode term = content.path("residual");
         residual = term.isObject() ? Optional.of(ResidualTerm.fromJson(term, d)) : Optional.empty();
+    }
+
+    /** The model that a fit and its context make. */
+    public static Model of(Fit fit, ModelContext context) {
+        return sealed(ModelContent.of(fit, context));
     }
 
     /** The model of complete content, given its fingerprint here. */

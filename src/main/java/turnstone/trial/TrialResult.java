@@ -1,0 +1,118 @@
+package turnstone.trial;
+
+import java.time.LocalDate;
+import java.util.ArrayList;
+import java.util.Collection;
+import java.util.HashMap;
+import java.util.List;
+import java.util.Map;
+import java.util.Optional;
+import java.util.TreeMap;
+import java.util.TreeSet;
+
+/**
+ * What a trial counted: tallies by form and side, and what a reader must know to judge them. Immutable once built; the tallies are not
+ * copied.
+ */
+public final class TrialResult {
+    private record Seat(TrialForm form, Side side) {}
+
+    private final String candidate;
+    private final Optional<String> inService;
+    private final List<LocalDate> days;
+    private final List<TrialShowing> showings;
+    private final Map<String, String> notTried;
+    private final Map<Seat, TrialTally> tallies;
+
+    private TrialResult(Builder builder) {
+        candidate = builder.candidate;
+        inService = builder.inService;
+        showings = List.copyOf(builder.showings);
+        TreeSet<LocalDate> ascending = new TreeSet<>();
+        showings.forEach(showing -> ascending.add(showing.day()));
+        days = List.copyOf(ascending);
+        notTried = new TreeMap<>(builder.notTried);
+        tallies = Map.copyOf(builder.tallies);
+    }
+
+    /** Begins the result of a trial of this candidate against what is in service, by their fingerprints. */
+    public static Builder of(String candidate, Optional<String> inService) {
+        return new Builder(candidate, inService);
+    }
+
+    /** The fingerprint of the candidate. */
+    public String candidate() {
+        return candidate;
+    }
+
+    /** The fingerprint of what is in service. */
+    public Optional<String> inService() {
+        return inService;
+    }
+
+    /** The days judged, ascending. */
+    public List<LocalDate> days() {
+        return days;
+    }
+
+    /** The showings of the trial. */
+    public List<TrialShowing> showings() {
+        return showings;
+    }
+
+    /** Materials that could not be tried, with the reason. */
+    public Map<String, String> notTried() {
+        return Map.copyOf(notTried);
+    }
+
+    /** The tally of one form and side; empty where the trial did not make it. */
+    public Optional<TrialTally> tally(TrialForm form, Side side) {
+        return Optional.ofNullable(tallies.get(new Seat(form, side)));
+    }
+
+    /** Collects a result. */
+    public static final class Builder {
+        private final String candidate;
+        private final Optional<String> inService;
+        private final List<TrialShowing> showings = new ArrayList<>();
+        private final Map<String, String> notTried = new TreeMap<>();
+        private final Map<Seat, TrialTally> tallies = new HashMap<>();
+
+        private Builder(String candidate, Optional<String> inService) {
+            this.candidate = candidate;
+            this.inService = inService;
+        }
+
+        /** Adds showings that were judged. */
+        public Builder showings(Collection<TrialShowing> more) {
+            showings.addAll(more);
+            return this;
+        }
+
+        /** Says that a material could not be tried, and why. */
+        public Builder notTried(String material, String why) {
+            notTried.put(material, why);
+            return this;
+        }
+
+        /** Says that all trays of a material lie in one group, so that no model can be made without its trays. */
+        public Builder oneGroupOnly(String material) {
+            return notTried(
+                    material,
+                    material
+                            + " was not tried: all its trays lie in one group; show a tray of another group, or deal its"
+                            + " trays into two groups or more");
+        }
+
+        /** Gives the tally of one form and side. */
+        public Builder tally(TrialForm form, Side side, TrialTally tally) {
+            tallies.put(new Seat(form, side), tally);
+            return this;
+        }
+
+        /** The result. */
+        public TrialResult build() {
+            return new TrialResult(this);
+        }
+    }
+}
