@@ -7,6 +7,10 @@ final class Commands {
     private Commands() {}
 
     static CommandLine line(Console console) {
-        return new CommandLine(new Turnstone());
+        return new CommandLine(new Turnstone())
+                .addSubcommand(new ReleaseCommand(console))
+                .addSubcommand(new RevertCommand(console))
+                .addSubcommand(new HistoryCommand(console))
+                .addSubcommand(new VerifyCommand(console));
     }
 }
