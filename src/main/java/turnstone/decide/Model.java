@@ -203,6 +203,11 @@ public final class Model {
         return content.required("balance").deepCopy();
     }
 
+    /** All that the fit depended on but sums, head and count scale; empty for a model of a table. A copy. */
+    public Optional<JsonNode> recipe() {
+        return Optional.ofNullable(content.get("recipe")).map(node -> (JsonNode) node.deepCopy());
+    }
+
     /** Number of axes. */
     public int rank() {
         return axes.length;

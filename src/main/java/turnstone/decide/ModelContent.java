@@ -26,6 +26,7 @@ final class ModelContent {
         node.put("ridge", fit.ridge()).put("reciprocalCondition", fit.reciprocalCondition());
         node.put("withinDegreesOfFreedom", fit.withinDegreesOfFreedom());
         node.set("balance", context.balance().deepCopy());
+        context.recipe().ifPresent(recipe -> node.set("recipe", recipe.deepCopy()));
         node.set("fisherRatios", Json.array(fit.fisherRatios()));
         node.set("fisherShares", Json.array(fit.fisherShares()));
         node.put("wilks", fit.wilks());

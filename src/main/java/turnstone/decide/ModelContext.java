@@ -18,6 +18,7 @@ import turnstone.measure.CountScale;
  * @param countScale that counts are made with
  * @param pretreatment {@code {"head", "tail"}}, each in its own JSON form
  * @param balance what weighted the scatter, in the form of the recipe
+ * @param recipe all that a fit depends on but sums, head and count scale; empty for a table, which is fitted once
  * @param madeFrom the lineage
  * @param decisionPriors of the materials in the fit's order, above 0, together 1; empty for equal ones
  * @param unfamiliarShare the share of good records that may be flagged, 0 (never flag) up to 1
@@ -30,6 +31,7 @@ public record ModelContext(
         CountScale countScale,
         JsonNode pretreatment,
         JsonNode balance,
+        Optional<JsonNode> recipe,
         MadeFrom madeFrom,
         List<Double> decisionPriors,
         double unfamiliarShare,
@@ -57,6 +59,7 @@ public record ModelContext(
                 countScale,
                 Json.object(),
                 Json.object(),
+                Optional.empty(),
                 madeFrom,
                 List.of(),
                 0.01,
@@ -72,6 +75,7 @@ public record ModelContext(
                 countScale,
                 node,
                 balance,
+                recipe,
                 madeFrom,
                 decisionPriors,
                 unfamiliarShare,
@@ -87,6 +91,23 @@ public record ModelContext(
                 countScale,
                 pretreatment,
                 node,
+                recipe,
+                madeFrom,
+                decisionPriors,
+                unfamiliarShare,
+                orientedTo,
+                scaleLoss);
+    }
+
+    /** The same with the JSON of the recipe that makes the model again from a ledger. */
+    public ModelContext withRecipe(JsonNode node) {
+        return new ModelContext(
+                scope,
+                channels,
+                countScale,
+                pretreatment,
+                balance,
+                Optional.of(node),
                 madeFrom,
                 decisionPriors,
                 unfamiliarShare,
@@ -102,6 +123,7 @@ public record ModelContext(
                 countScale,
                 pretreatment,
                 balance,
+                recipe,
                 madeFrom,
                 DoubleStream.of(priors).boxed().toList(),
                 unfamiliarShare,
@@ -117,6 +139,7 @@ public record ModelContext(
                 countScale,
                 pretreatment,
                 balance,
+                recipe,
                 madeFrom,
                 decisionPriors,
                 share,
@@ -132,6 +155,7 @@ public record ModelContext(
                 countScale,
                 pretreatment,
                 balance,
+                recipe,
                 madeFrom,
                 decisionPriors,
                 unfamiliarShare,
@@ -147,6 +171,7 @@ public record ModelContext(
                 countScale,
                 pretreatment,
                 balance,
+                recipe,
                 madeFrom,
                 decisionPriors,
                 unfamiliarShare,
