@@ -89,6 +89,11 @@ final class Entry {
         return text(key).orElse(otherwise);
     }
 
+    /** Whether a switch is on; empty where it is left out. YAML reads on, yes and true alike. */
+    Optional<Boolean> on(String key) {
+        return optional(key).map(entry -> entry.node.booleanValue());
+    }
+
     double number() {
         double value = node.doubleValue();
         if (!Double.isFinite(value)) {

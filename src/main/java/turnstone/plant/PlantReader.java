@@ -138,8 +138,7 @@ final class PlantReader {
     private ProjectSpec project() {
         Optional<Entry> project = root.optional("project");
         return new ProjectSpec(
-                ProjectSpec.Write.of(
-                        project.flatMap(entry -> entry.text("write")).orElse("on")),
+                project.flatMap(entry -> entry.on("write")).orElse(true) ? ProjectSpec.Write.ON : ProjectSpec.Write.OFF,
                 TableFormat.of(project.flatMap(entry -> entry.text("form")).orElse("parquet")));
     }
 }

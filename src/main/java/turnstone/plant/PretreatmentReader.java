@@ -50,8 +50,7 @@ final class PretreatmentReader {
     private static Resampling resampling(
             Entry pretreatment, Optional<Entry> head, double[] axis_nm, List<Instrument> instruments) {
         boolean tables = instruments.stream().allMatch(Instrument::hasWavelengths);
-        String word = head.flatMap(entry -> entry.text("resample")).orElse(axis_nm.length > 0 && tables ? "on" : "off");
-        if (word.equals("off")) {
+        if (!head.flatMap(entry -> entry.on("resample")).orElse(axis_nm.length > 0 && tables)) {
             return Resampling.NONE;
         }
         if (axis_nm.length == 0 || !tables) {
@@ -79,7 +78,7 @@ final class PretreatmentReader {
         head.optional("deadAtOrBelow").ifPresent(value -> builder.deadAtOrBelow(value.number()));
         head.optional("floor").ifPresent(value -> builder.floor(value.number()));
         head.optional("noSignalBelow").ifPresent(value -> builder.noSignalBelow(value.number()));
-        if (head.text("log", "off").equals("on")) {
+        if (head.on("log").orElse(false)) {
             builder.absorbance();
         }
         for (Entry range : ranges(head)) {
@@ -92,7 +91,7 @@ final class PretreatmentReader {
                         range.at("toChannel").whole() - 1);
             }
         }
-        if (head.text("snv", "off").equals("on")) {
+        if (head.on("snv").orElse(false)) {
             builder.snv(head.number("snvSpreadFloor", USUAL_SPREAD_FLOOR));
         } else if (head.has("snvSpreadFloor")) {
             throw head.at("snvSpreadFloor").fault("a spread floor without SNV").expected("snv: on");

@@ -12,10 +12,6 @@ public record ProjectSpec(Write write, TableFormat form) {
         /** Written. */
         ON,
         /** Not written. */
-        OFF;
-
-        static Write of(String word) {
-            return Words.constant(Write.class, word);
-        }
+        OFF
     }
 }
