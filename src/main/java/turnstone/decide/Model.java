@@ -205,7 +205,7 @@ public final class Model {
 
     /** All that the fit depended on but sums, head and count scale; empty for a model of a table. A copy. */
     public Optional<JsonNode> recipe() {
-        return Optional.ofNullable(content.get("recipe")).map(node -> (JsonNode) node.deepCopy());
+        return Optional.ofNullable(content.get("recipe")).map(JsonNode::deepCopy);
     }
 
     /** Number of axes. */
