@@ -8,8 +8,13 @@ up_to_date() {
     [ -z "$(find "$home/pom.xml" "$home/.mvn" "$home/src/main" -newer "$stamp" -print -quit)" ]
 }
 
-# A release without sources has nothing to build.
+# A release without sources has nothing to build; TURNSTONE_BUILD=never takes what is there.
 build_if_needed() {
+    case ${TURNSTONE_BUILD:-} in
+        '') ;;
+        never) return 0 ;;
+        *) stop 2 "TURNSTONE_BUILD is \"$TURNSTONE_BUILD\"; expected never, or nothing" ;;
+    esac
     [ -d "$home/src/main" ] || return 0
     ! up_to_date || return 0
     mkdir -p "$home/target" 2>/dev/null || stop 4 "$home/target can't be written: the first use of a checkout builds there"
