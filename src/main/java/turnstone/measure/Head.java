@@ -33,6 +33,7 @@ public final class Head implements Serializable {
     private final HeadMaps maps;
     private final HeadColumns columns;
     private final double[] reflectance;
+    private final double[] exponents;
 
     private Head(HeadSpec spec, int inputs, HeadMaps maps, HeadColumns columns) {
         this.inputs = inputs;
@@ -51,6 +52,7 @@ public final class Head implements Serializable {
         takesLogarithm = spec.takesLogarithm();
         snvSpreadFloor = spec.snvSpreadFloor().orElse(ABSENT);
         reflectance = new double[corrects ? inputs : 0];
+        exponents = new double[takesLogarithm ? outputs : 0];
     }
 
     private Head(Head other) {
@@ -70,6 +72,7 @@ public final class Head implements Serializable {
         maps = other.maps;
         columns = other.columns;
         reflectance = new double[other.reflectance.length];
+        exponents = new double[other.exponents.length];
     }
 
     /**
@@ -209,7 +212,7 @@ public final class Head implements Serializable {
             }
         }
         if (takesLogarithm) {
-            LaneMath.absorbances(out, to, n);
+            LaneMath.absorbances(out, to, n, exponents);
         }
         return snvSpreadFloor == ABSENT ? HeadOutcome.ACCEPTED : standardise(out, to, trouble);
     }

@@ -5,7 +5,7 @@ import java.math.BigInteger;
 import java.util.ArrayList;
 import java.util.Arrays;
 import java.util.List;
-import java.util.Map;
+import java.util.SortedMap;
 import java.util.TreeMap;
 import turnstone.fault.Fault;
 
@@ -21,27 +21,51 @@ public final class Tail implements Serializable {
     private final long[][] numerators;
     private final long[] denominators;
 
-    private Tail(int inputs, List<Map<Integer, Fraction>> rows) {
+    private Tail(int inputs, List<Row> rows) {
         this.inputs = inputs;
         columns = new int[rows.size()][];
         numerators = new long[rows.size()][];
         denominators = new long[rows.size()];
         for (int i = 0; i < rows.size(); i++) {
-            place(i, rows.get(i));
+            Row row = rows.get(i);
+            columns[i] =
+                    row.weights.keySet().stream().mapToInt(Integer::intValue).toArray();
+            numerators[i] = row.weights.values().stream().mapToLong(Tail::word).toArray();
+            denominators[i] = word(row.denominator);
         }
     }
 
-    private void place(int i, Map<Integer, Fraction> row) {
-        BigInteger common = BigInteger.ONE;
-        for (Fraction weight : row.values()) {
-            common = common.divide(common.gcd(weight.denominator())).multiply(weight.denominator());
+    /** Integer weights by input channel, ascending, over one denominator, in lowest terms. */
+    private record Row(SortedMap<Integer, BigInteger> weights, BigInteger denominator) {
+        static Row unit(int channel) {
+            SortedMap<Integer, BigInteger> weights = new TreeMap<>();
+            weights.put(channel, BigInteger.ONE);
+            return new Row(weights, BigInteger.ONE);
         }
-        columns[i] = row.keySet().stream().mapToInt(Integer::intValue).toArray();
-        numerators[i] = new long[row.size()];
-        denominators[i] = word(common);
-        int k = 0;
-        for (Fraction weight : row.values()) {
-            numerators[i][k++] = word(weight.numerator().multiply(common.divide(weight.denominator())));
+
+        /** Σ_k weights[k]·rows[k], over one common denominator and then reduced once. */
+        static Row combine(Fraction[] weights, List<Row> rows) {
+            BigInteger common = BigInteger.ONE;
+            for (int k = 0; k < weights.length; k++) {
+                BigInteger one = weights[k].denominator().multiply(rows.get(k).denominator);
+                common = common.divide(common.gcd(one)).multiply(one);
+            }
+            SortedMap<Integer, BigInteger> sum = new TreeMap<>();
+            for (int k = 0; k < weights.length; k++) {
+                BigInteger one = weights[k].denominator().multiply(rows.get(k).denominator);
+                BigInteger factor = weights[k].numerator().multiply(common.divide(one));
+                rows.get(k)
+                        .weights
+                        .forEach((channel, weight) -> sum.merge(channel, weight.multiply(factor), BigInteger::add));
+            }
+            sum.values().removeIf(weight -> weight.signum() == 0);
+            BigInteger shared = common;
+            for (BigInteger weight : sum.values()) {
+                shared = shared.gcd(weight);
+            }
+            BigInteger divisor = shared;
+            sum.replaceAll((channel, weight) -> weight.divide(divisor));
+            return new Row(sum, common.divide(divisor));
         }
     }
 
@@ -70,56 +94,40 @@ public final class Tail implements Serializable {
             throw new IllegalArgumentException("a tail needs at least one channel, not " + channels);
         }
         spec.outputs(channels);
-        List<Map<Integer, Fraction>> rows = identityRows(channels);
+        List<Row> rows = identityRows(channels);
         for (TailSpec.Step step : spec.steps()) {
             rows = compose(step, rows);
         }
         return new Tail(channels, rows);
     }
 
-    private static List<Map<Integer, Fraction>> identityRows(int channels) {
-        List<Map<Integer, Fraction>> rows = new ArrayList<>();
+    private static List<Row> identityRows(int channels) {
+        List<Row> rows = new ArrayList<>();
         for (int c = 0; c < channels; c++) {
-            TreeMap<Integer, Fraction> row = new TreeMap<>();
-            row.put(c, Fraction.ONE);
-            rows.add(row);
+            rows.add(Row.unit(c));
         }
         return rows;
     }
 
-    private static List<Map<Integer, Fraction>> compose(TailSpec.Step step, List<Map<Integer, Fraction>> rows) {
-        List<Map<Integer, Fraction>> result = new ArrayList<>();
+    private static List<Row> compose(TailSpec.Step step, List<Row> rows) {
+        List<Row> result = new ArrayList<>();
         if (step instanceof TailSpec.SavitzkyGolay smooth) {
             Fraction[] weights = SavitzkyGolayWeights.of(smooth);
             for (int i = 0; i + weights.length <= rows.size(); i++) {
-                result.add(combine(weights, rows.subList(i, i + weights.length)));
+                result.add(Row.combine(weights, rows.subList(i, i + weights.length)));
             }
         } else if (step instanceof TailSpec.Bins bins) {
             for (int i = 0; i < rows.size(); i += bins.width()) {
-                List<Map<Integer, Fraction>> bin = rows.subList(i, Math.min(i + bins.width(), rows.size()));
+                List<Row> bin = rows.subList(i, Math.min(i + bins.width(), rows.size()));
                 Fraction[] weights = new Fraction[bin.size()];
                 Arrays.fill(weights, Fraction.of(1, bin.size()));
-                result.add(combine(weights, bin));
+                result.add(Row.combine(weights, bin));
             }
         } else if (step instanceof TailSpec.Mask mask) {
             result.addAll(rows.subList(0, mask.first()));
             result.addAll(rows.subList(mask.last() + 1, rows.size()));
         }
         return result;
-    }
-
-    private static Map<Integer, Fraction> combine(Fraction[] weights, List<Map<Integer, Fraction>> rows) {
-        TreeMap<Integer, Fraction> sum = new TreeMap<>();
-        for (int k = 0; k < weights.length; k++) {
-            if (weights[k].isZero()) {
-                continue;
-            }
-            for (Map.Entry<Integer, Fraction> entry : rows.get(k).entrySet()) {
-                sum.merge(entry.getKey(), entry.getValue().times(weights[k]), Fraction::plus);
-            }
-        }
-        sum.values().removeIf(Fraction::isZero);
-        return sum;
     }
 
     /** Channels that go in. */
