@@ -17,6 +17,7 @@ import turnstone.fault.Fault;
 import turnstone.fisher.Cell;
 import turnstone.fisher.Fit;
 import turnstone.fisher.FitRequest;
+import turnstone.fisher.Orientation;
 import turnstone.fisher.Ridge;
 import turnstone.fisher.RoundedSource;
 import turnstone.json.Json;
@@ -101,7 +102,9 @@ public final class ModelMaker {
                 .withChannelNames(channels);
         Fit fit = Fit.of(request);
         Optional<Model> guide = orientedTo.filter(other -> other.channels().equals(channels));
-        Fit oriented = fit;
+        Fit oriented = guide.map(other -> Orientation.of(fit, other.axes(), Orientation.Manner.SIGNS)
+                        .turned())
+                .orElse(fit);
         return new Made(Model.of(oriented, context(recipe, sums, heldOut, there, oriented, guide)), keptWhole);
     }
 

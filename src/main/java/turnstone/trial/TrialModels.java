@@ -2,9 +2,11 @@ package turnstone.trial;
 
 import java.io.Serializable;
 import java.util.HashMap;
+import java.util.HashSet;
 import java.util.Map;
 import java.util.Objects;
 import java.util.Optional;
+import java.util.Set;
 import turnstone.decide.Model;
 import turnstone.decide.Projector;
 
@@ -34,9 +36,17 @@ public final class TrialModels implements Serializable {
         /** Null where nothing is in service: an {@code Optional} cannot be serialised. */
         private final Projector inService;
 
-        private Pair(Projector candidate, Projector inService) {
+        private final HashSet<String> seenWhole;
+
+        private Pair(Projector candidate, Projector inService, Set<String> seenWhole) {
             this.candidate = candidate;
             this.inService = inService;
+            this.seenWhole = new HashSet<>(seenWhole);
+        }
+
+        /** Whether a record labelled with this material may be judged: false where the pair could not be made without its trays. */
+        public boolean tries(String material) {
+            return !seenWhole.contains(material);
         }
 
         /** The candidate recipe, re-made. */
@@ -51,7 +61,7 @@ public final class TrialModels implements Serializable {
 
         /** The same for another thread. */
         public Pair copy() {
-            return new Pair(candidate.copy(), inService == null ? null : inService.copy());
+            return new Pair(candidate.copy(), inService == null ? null : inService.copy(), seenWhole);
         }
     }
 
@@ -96,19 +106,36 @@ public final class TrialModels implements Serializable {
 
         /** The pair made without this tray group. */
         public Builder thisFleet(int withoutTrayGroup, Model candidate, Optional<Model> inService) {
-            return put(Key.of(TrialForm.THIS_FLEET, withoutTrayGroup, ""), candidate, inService);
+            return thisFleet(withoutTrayGroup, candidate, inService, Set.of());
+        }
+
+        /** The same, but for materials that have no other trays: they were kept, and their records are not to be judged. */
+        public Builder thisFleet(
+                int withoutTrayGroup, Model candidate, Optional<Model> inService, Set<String> seenWhole) {
+            return put(Key.of(TrialForm.THIS_FLEET, withoutTrayGroup, ""), candidate, inService, seenWhole);
         }
 
         /** The pair made without this tray group and without this instrument. */
         public Builder machineNotSeen(
                 int withoutTrayGroup, String withoutInstrument, Model candidate, Optional<Model> inService) {
-            Objects.requireNonNull(withoutInstrument);
-            return put(Key.of(TrialForm.MACHINE_NOT_SEEN, withoutTrayGroup, withoutInstrument), candidate, inService);
+            return machineNotSeen(withoutTrayGroup, withoutInstrument, candidate, inService, Set.of());
         }
 
-        private Builder put(Key key, Model candidate, Optional<Model> inService) {
+        /** The same, but for materials that have no other trays or no other machine. */
+        public Builder machineNotSeen(
+                int withoutTrayGroup,
+                String withoutInstrument,
+                Model candidate,
+                Optional<Model> inService,
+                Set<String> seenWhole) {
+            Objects.requireNonNull(withoutInstrument);
+            Key key = Key.of(TrialForm.MACHINE_NOT_SEEN, withoutTrayGroup, withoutInstrument);
+            return put(key, candidate, inService, seenWhole);
+        }
+
+        private Builder put(Key key, Model candidate, Optional<Model> inService, Set<String> seenWhole) {
             Pair pair = new Pair(
-                    Projector.of(candidate), inService.map(Projector::of).orElse(null));
+                    Projector.of(candidate), inService.map(Projector::of).orElse(null), seenWhole);
             boolean alike = pairs.values().stream().allMatch(other -> (other.inService == null) == inService.isEmpty());
             if (!alike) {
                 throw new IllegalArgumentException("one pair has a side in service and another has none");
