@@ -51,7 +51,7 @@ class LauncherTest {
         Path linkToLink = Files.createSymbolicLink(folder.resolve("again"), folder.relativize(link));
         Ended ended = launch(linkToLink, Map.of(), "--help");
         assertThat(ended.exitCode()).as(ended.talk()).isZero();
-        assertThat(ended.out()).contains("turnstone", "post", "refit");
+        assertThat(ended.out()).contains("turnstone", "release", "verify");
         assertThat(ended.talk()).isEmpty();
     }
 
@@ -93,19 +93,23 @@ class LauncherTest {
     void refusesALogFolderThatCannotBeWritten() throws IOException {
         Path file = Files.writeString(folder.resolve("file"), "in the way");
         refusedInOneLine(
-                launch(LAUNCHER, Map.of("TURNSTONE_LOG_DIR", file.toString()), "post"), 4, file.toString(), "TURNSTONE_LOG_DIR");
+                launch(LAUNCHER, Map.of("TURNSTONE_LOG_DIR", file.toString()), "post"),
+                4,
+                file.toString(),
+                "TURNSTONE_LOG_DIR");
     }
 
     @Test
     void keepsWhatTheMachinePrintsOffTheTerminalAndInTheLog() throws IOException {
-        // The command is refused for its option, so no engine starts: what is left is what the Java machine says of itself.
+        // The command is refused for its option, so no engine starts: what is left is what the Java machine says of
+        // itself.
         Ended ended = launch(LAUNCHER, Map.of(), "post", "--no-such-option");
         assertThat(ended.exitCode()).as(ended.talk()).isEqualTo(2);
         assertThat(ended.talk()).contains("--no-such-option").doesNotContain("WARNING");
         try (Stream<Path> logs = Files.list(folder.resolve("log"))) {
-            assertThat(logs.toList()).singleElement().satisfies(log -> assertThat(log)
-                    .content()
-                    .contains("jdk.incubator.vector"));
+            assertThat(logs.toList())
+                    .singleElement()
+                    .satisfies(log -> assertThat(log).content().contains("jdk.incubator.vector"));
         }
     }
 }
