@@ -5,6 +5,7 @@ import java.io.IOException;
 import java.io.InputStream;
 import java.io.UncheckedIOException;
 import java.math.BigDecimal;
+import java.math.BigInteger;
 import java.math.RoundingMode;
 import java.nio.charset.StandardCharsets;
 import java.util.ArrayList;
@@ -86,8 +87,21 @@ record CheckTable(List<String> labels, List<List<BigDecimal>> records, CountScal
         BigDecimal most = values.stream().max(BigDecimal::compareTo).orElseThrow();
         BigDecimal offset = least.add(most).divide(BigDecimal.valueOf(2)).setScale(places, RoundingMode.HALF_EVEN);
         BigDecimal step = BigDecimal.ONE.movePointLeft(places);
-        boolean coarse = most.subtract(least).movePointRight(places).compareTo(BigDecimal.valueOf(1L << 21)) < 0;
+        BigDecimal steps = most.subtract(least).movePointRight(places);
+        if (steps.compareTo(BigDecimal.valueOf(1L << 43)) >= 0) {
+            return new ChannelScale(least, commonStep(values, places), Precision.FINE);
+        }
+        boolean coarse = steps.compareTo(BigDecimal.valueOf(1L << 21)) < 0;
         return new ChannelScale(offset, step, coarse ? Precision.COARSE : Precision.FINE);
+    }
+
+    /** Largest step that all values are multiples of, for values with many decimals. */
+    private static BigDecimal commonStep(List<BigDecimal> values, int places) {
+        BigInteger common = BigInteger.ZERO;
+        for (BigDecimal value : values) {
+            common = common.gcd(value.movePointRight(places).toBigIntegerExact());
+        }
+        return new BigDecimal(common).movePointLeft(places);
     }
 
     /** Names of the materials in code-point order. */

@@ -11,9 +11,9 @@ final class Expect {
     private Expect() {}
 
     static void relative(String what, double found, double expected, double bound) {
-        assertThat(Math.abs(found - expected) / Math.abs(expected))
+        assertThat(Math.abs(found - expected))
                 .as("%s: %s for %s", what, found, expected)
-                .isLessThanOrEqualTo(bound);
+                .isLessThanOrEqualTo(bound * Math.abs(expected));
     }
 
     /** Largest relative distance from numbers or decimal texts. */
