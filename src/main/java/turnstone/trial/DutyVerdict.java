@@ -5,6 +5,7 @@ import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Locale;
+import java.util.Optional;
 import turnstone.json.Json;
 
 /**
@@ -12,7 +13,7 @@ import turnstone.json.Json;
  *
  * @param name the duty
  * @param decision release where every requirement is met, hold otherwise
- * @param mainReason one sentence
+ * @param mainReason one sentence: the widest miss, else what could not be judged, else the closest of those that are met
  * @param requirements as judged, the plant's in their order, then the comparison
  * @param figures what was found, for each form and side
  */
@@ -39,25 +40,26 @@ public record DutyVerdict(
             return "the plant file gives this duty no requirement, and nothing is in service to compare with;"
                     + " write one to have it judged";
         }
+        Optional<RequirementResult> closest = requirements.stream()
+                .filter(requirement -> requirement.margin().isPresent())
+                .min(Comparator.comparingDouble(requirement -> requirement.margin().orElseThrow()));
+        if (closest.isPresent() && !closest.get().met()) {
+            return comparison(closest.get());
+        }
         for (RequirementResult requirement : requirements) {
             if (requirement.outcome() == RequirementResult.Outcome.NOT_JUDGED) {
                 return requirement.name() + " could not be judged: " + requirement.why();
             }
         }
-        RequirementResult closest = requirements.stream()
-                .min(Comparator.comparingDouble(
-                        requirement -> requirement.margin().orElseThrow()))
-                .orElseThrow();
-        String comparison =
-                closest.name() + " is " + VerdictText.share(closest.found().orElseThrow()) + ", required "
-                        + VerdictText.share(closest.required());
-        if (!closest.met()) {
-            return comparison;
-        }
+        String comparison = comparison(closest.orElseThrow());
         return requirements.size() == 1
                 ? comparison
-                : String.format(
-                        Locale.ROOT, "all %d requirements are met; closest: %s", requirements.size(), comparison);
+                : String.format(Locale.ROOT, "all %d requirements are met; closest: %s", requirements.size(), comparison);
+    }
+
+    private static String comparison(RequirementResult requirement) {
+        return requirement.name() + " is " + requirement.amount(requirement.found().orElseThrow()) + ", required "
+                + requirement.amount(requirement.required());
     }
 
     ObjectNode json() {

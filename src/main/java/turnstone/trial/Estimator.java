@@ -20,6 +20,9 @@ import turnstone.plant.Requirement;
  * <p>Differences between the two sides are taken showing by showing, on the figure's own scale.
  */
 public final class Estimator {
+    /** Contributions are shares rounded at 1e-16: their variance is dust below this, and an interval made of it would be false. */
+    private static final double NO_SPREAD = 1e-26;
+
     private static final String ALIKE =
             "both sides sent alike on every showing; the bound rests on the number of showings";
 
@@ -61,8 +64,8 @@ public final class Estimator {
             return Estimate.pointOnly(point, confidence, count, oneShowing(single.get()));
         }
         double variance = error.variance();
-        if (variance == 0) {
-            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all");
+        if (variance <= NO_SPREAD) {
+            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all; more showings would give one");
         }
         double df = error.degreesOfFreedom();
         double reach = Quantiles.student(1 - alpha, df) * Math.sqrt(variance) / (point * (1 - point));
@@ -113,8 +116,8 @@ public final class Estimator {
             return Estimate.pointOnly(point, confidence, count, oneShowing(single.get()));
         }
         double variance = error.variance();
-        if (variance == 0) {
-            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all");
+        if (variance <= NO_SPREAD) {
+            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all; more showings would give one");
         }
         double df = error.degreesOfFreedom();
         double reach = Quantiles.student((1 + confidence) / 2, df) * Math.sqrt(variance);

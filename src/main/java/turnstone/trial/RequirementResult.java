@@ -55,6 +55,11 @@ public record RequirementResult(
         return outcome == Outcome.MET;
     }
 
+    /** A value of this requirement for people: a share, or points where it is a difference. */
+    String amount(double value) {
+        return name.equals(ComparisonRule.NAME) ? VerdictText.points(value) : VerdictText.share(value);
+    }
+
     ObjectNode json() {
         ObjectNode node = Json.object().put("name", name);
         VerdictJson.put(node, "found", found);

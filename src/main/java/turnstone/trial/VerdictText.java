@@ -29,24 +29,27 @@ final class VerdictText {
         wrap(page, "", "The verdict rests on " + verdict.restsOn() + ".");
         for (DutyVerdict duty : verdict.duties()) {
             page.append('\n');
-            append(page, duty);
+            append(page, duty, verdict.mainReason());
         }
         page.append('\n');
         cautions(page);
         return page.toString();
     }
 
-    private static void append(StringBuilder page, DutyVerdict duty) {
+    private static void append(StringBuilder page, DutyVerdict duty, String said) {
         page.append(duty.name()).append(": ").append(duty.decision().label()).append('\n');
-        wrap(page, "  ", duty.mainReason() + ".");
+        // The main reason of the whole verdict opens the page already.
+        if (!said.equals(duty.name() + ": " + duty.mainReason())) {
+            wrap(page, "  ", duty.mainReason() + ".");
+        }
         for (RequirementResult requirement : duty.requirements()) {
             page.append("  - ").append(requirement.name()).append(": ");
             page.append(requirement.outcome().label()).append('\n');
             String numbers = requirement.found().isPresent()
-                    ? "found " + share(requirement.found().getAsDouble()) + ", required "
-                            + share(requirement.required()) + ", margin "
+                    ? "found " + requirement.amount(requirement.found().getAsDouble()) + ", required "
+                            + requirement.amount(requirement.required()) + ", margin "
                             + points(requirement.margin().orElseThrow()) + " (" + requirement.bound() + ")"
-                    : "required " + share(requirement.required()) + " (" + requirement.bound() + "); "
+                    : "required " + requirement.amount(requirement.required()) + " (" + requirement.bound() + "); "
                             + requirement.why();
             wrap(page, "    ", numbers);
         }
@@ -101,7 +104,8 @@ final class VerdictText {
         return String.format(Locale.ROOT, "%.2f %%", 100 * share);
     }
 
-    private static String points(double difference) {
+    /** {@code +1.20 points}. */
+    static String points(double difference) {
         return String.format(Locale.ROOT, "%+.2f points", 100 * difference);
     }
 

@@ -1,0 +1,66 @@
+package turnstone.trial;
+
+import java.time.LocalDate;
+import java.util.ArrayList;
+import java.util.List;
+import java.util.Map;
+import turnstone.plant.Duty;
+import turnstone.plant.Requirement;
+
+/** Tallies written by hand for duties of a few materials. */
+final class Fixture {
+    final List<TrialShowing> showings = new ArrayList<>();
+    final TrialTally tally = TrialTally.empty();
+
+    static Duty duty(Duty.Stream stream, Map<String, Double> mix, Requirement... requirements) {
+        List<String> sorters = List.of("avocet", "curlew", "dunlin", "godwit", "knot", "plover");
+        return new Duty("PET out", List.of("PET"), stream, sorters, mix, List.of(requirements));
+    }
+
+    static Requirement purity(double least, Requirement.Bound bound) {
+        return new Requirement(Requirement.Figure.DECISION_PURITY, Requirement.Unseen.TRAY, least, bound, 0.90);
+    }
+
+    static Requirement recovery(double least, Requirement.Bound bound) {
+        return new Requirement(Requirement.Figure.DECISION_RECOVERY, Requirement.Unseen.TRAY, least, bound, 0.90);
+    }
+
+    /** A showing with records decided PET, decided PP, decided PET but unfamiliar, and without signal. */
+    Fixture showing(String sorter, String material, long pet, long pp, long unfamiliar, long noSignal) {
+        String id = "s" + (100 + showings.size());
+        showings.add(new TrialShowing(
+                id, LocalDate.of(2026, 3, 13), sorter, sorter + "@2026-01-01", material + "-1", 1, material));
+        tally.add(new TallyCell(id, material, "PET", Recognition.FAMILIAR), pet);
+        tally.add(new TallyCell(id, material, "PP", Recognition.FAMILIAR), pp);
+        tally.add(new TallyCell(id, material, "PET", Recognition.UNFAMILIAR), unfamiliar);
+        tally.add(TallyCell.noSignal(id, material), noSignal);
+        return this;
+    }
+
+    /** Two showings of PET with 17 of 20 familiar and decided PET, two of PVC with 1 of 20, two of PP with none. */
+    static Fixture small() {
+        return new Fixture()
+                .showing("avocet", "PET", 9, 0, 0, 1)
+                .showing("avocet", "PET", 8, 1, 1, 0)
+                .showing("avocet", "PVC", 1, 8, 1, 0)
+                .showing("avocet", "PVC", 0, 9, 0, 1)
+                .showing("avocet", "PP", 0, 10, 0, 0)
+                .showing("avocet", "PP", 0, 10, 0, 0);
+    }
+
+    /** Six sorters with four showings of PET and of PP each, errors as given by a repeating pattern. */
+    static Fixture fleet(long lost, long[] pattern) {
+        Fixture fixture = new Fixture();
+        int i = 0;
+        for (String sorter : List.of("avocet", "curlew", "dunlin", "godwit", "knot", "plover")) {
+            for (int k = 0; k < 4; k++) {
+                long errors = lost + pattern[i % pattern.length];
+                fixture.showing(sorter, "PET", 100 - errors, errors, 0, 0);
+                fixture.showing(
+                        sorter, "PP", pattern[(i + 1) % pattern.length], 100 - pattern[(i + 1) % pattern.length], 0, 0);
+                i++;
+            }
+        }
+        return fixture;
+    }
+}
