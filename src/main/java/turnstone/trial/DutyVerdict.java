@@ -42,7 +42,8 @@ public record DutyVerdict(
         }
         Optional<RequirementResult> closest = requirements.stream()
                 .filter(requirement -> requirement.margin().isPresent())
-                .min(Comparator.comparingDouble(requirement -> requirement.margin().orElseThrow()));
+                .min(Comparator.comparingDouble(
+                        requirement -> requirement.margin().orElseThrow()));
         if (closest.isPresent() && !closest.get().met()) {
             return comparison(closest.get());
         }
@@ -54,11 +55,13 @@ public record DutyVerdict(
         String comparison = comparison(closest.orElseThrow());
         return requirements.size() == 1
                 ? comparison
-                : String.format(Locale.ROOT, "all %d requirements are met; closest: %s", requirements.size(), comparison);
+                : String.format(
+                        Locale.ROOT, "all %d requirements are met; closest: %s", requirements.size(), comparison);
     }
 
     private static String comparison(RequirementResult requirement) {
-        return requirement.name() + " is " + requirement.amount(requirement.found().orElseThrow()) + ", required "
+        return requirement.name() + " is "
+                + requirement.amount(requirement.found().orElseThrow()) + ", required "
                 + requirement.amount(requirement.required());
     }
 

@@ -65,7 +65,11 @@ public final class Estimator {
         }
         double variance = error.variance();
         if (variance <= NO_SPREAD) {
-            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all; more showings would give one");
+            return Estimate.pointOnly(
+                    point,
+                    confidence,
+                    count,
+                    "interval not given: showings do not differ at all; more showings would give one");
         }
         double df = error.degreesOfFreedom();
         double reach = Quantiles.student(1 - alpha, df) * Math.sqrt(variance) / (point * (1 - point));
@@ -117,7 +121,11 @@ public final class Estimator {
         }
         double variance = error.variance();
         if (variance <= NO_SPREAD) {
-            return Estimate.pointOnly(point, confidence, count, "interval not given: showings do not differ at all; more showings would give one");
+            return Estimate.pointOnly(
+                    point,
+                    confidence,
+                    count,
+                    "interval not given: showings do not differ at all; more showings would give one");
         }
         double df = error.degreesOfFreedom();
         double reach = Quantiles.student((1 + confidence) / 2, df) * Math.sqrt(variance);

@@ -37,7 +37,8 @@ class CoverageTest {
             double other = MIX.get("PP") * draw(fixture, "PP") + MIX.get("PVC") * draw(fixture, "PVC");
             double target = MIX.get("PET") * pet;
             Estimator estimator = new Estimator(fixture.showings);
-            purityHeld += holds(estimator, Requirement.Figure.DECISION_PURITY, duty, fixture, target / (target + other));
+            purityHeld +=
+                    holds(estimator, Requirement.Figure.DECISION_PURITY, duty, fixture, target / (target + other));
             recoveryHeld += holds(estimator, Requirement.Figure.DECISION_RECOVERY, duty, fixture, pet);
         }
         System.out.println("interval coverage of " + PLANTS + " plants, seed " + SEED + ": purity " + purityHeld

@@ -35,8 +35,8 @@ class JudgeTest {
 
     @Test
     void withNothingInServiceThePlantsRequirementsDecideAlone() {
-        Duty duty = duty(
-                Fixture.purity(0.95, Requirement.Bound.LOWER), Fixture.recovery(0.95, Requirement.Bound.POINT));
+        Duty duty =
+                duty(Fixture.purity(0.95, Requirement.Bound.LOWER), Fixture.recovery(0.95, Requirement.Bound.POINT));
         Verdict verdict = verdict(result(Optional.empty(), good).build(), duty);
         assertThat(verdict.decision()).isEqualTo(Decision.RELEASE);
         JsonNode json = verdict.json();
@@ -56,7 +56,8 @@ class JudgeTest {
                 .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, good.tally)
                 .build();
         JsonNode json = verdict(result, duty).json();
-        assertThat(json.fieldNames()).toIterable()
+        assertThat(json.fieldNames())
+                .toIterable()
                 .contains("verdict", "duties", "showings", "days", "candidate", "inService");
         assertThat(json.path("verdict").asText()).isIn("release", "hold");
         assertThat(json.path("showings").asInt()).isEqualTo(48);
@@ -65,7 +66,8 @@ class JudgeTest {
         assertThat(json.path("inService").asText()).isEqualTo(IN_SERVICE);
         JsonNode first = json.path("duties").path(0);
         assertThat(first.fieldNames()).toIterable().contains("name", "verdict", "mainReason", "requirements");
-        assertThat(first.path("requirements").path(0).fieldNames()).toIterable()
+        assertThat(first.path("requirements").path(0).fieldNames())
+                .toIterable()
                 .containsExactly("name", "found", "required", "bound", "margin", "met");
         assertThat(first.path("requirements").path(0).path("bound").asText())
                 .isEqualTo("lower end of the 90 % interval");
@@ -73,14 +75,17 @@ class JudgeTest {
 
     @Test
     void aMissedRequirementHoldsAndIsTheMainReason() {
-        Duty duty = duty(
-                Fixture.purity(0.90, Requirement.Bound.POINT), Fixture.recovery(0.99, Requirement.Bound.POINT));
+        Duty duty =
+                duty(Fixture.purity(0.90, Requirement.Bound.POINT), Fixture.recovery(0.99, Requirement.Bound.POINT));
         Verdict verdict = verdict(result(Optional.empty(), good).build(), duty);
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         // 24 showings of PET lose 2 and 0, 1, 3, 0, 2 in turn: 48 + 28 of 2400.
         assertThat(verdict.mainReason())
                 .isEqualTo("PET out: decision recovery, tray not seen, point is 96.83 %, required 99.00 %");
-        assertThat(verdict.text()).contains("margin -2.17 points").contains("lock-out").contains("hand sort");
+        assertThat(verdict.text())
+                .contains("margin -2.17 points")
+                .contains("lock-out")
+                .contains("hand sort");
         assertThat(verdict.text().lines()).allMatch(line -> line.length() <= 80);
     }
 
@@ -134,24 +139,23 @@ class JudgeTest {
         Verdict verdict = verdict(result, duty(Fixture.recovery(0.5, Requirement.Bound.POINT)));
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         assertThat(verdict.mainReason()).contains("PP was not tried: all its trays lie in one group");
-        JsonNode requirement = verdict.json().path("duties").path(0).path("requirements").path(0);
+        JsonNode requirement =
+                verdict.json().path("duties").path(0).path("requirements").path(0);
         assertThat(requirement.path("met").asBoolean(true)).isFalse();
         assertThat(requirement.path("found").isNull()).isTrue();
         assertThat(requirement.path("margin").isNull()).isTrue();
         assertThat(requirement.path("why").asText()).contains("two groups or more");
-        TrialResult elsewhere = result(Optional.empty(), good).oneGroupOnly("PA").build();
-        assertThat(verdict(elsewhere, duty(Fixture.recovery(0.5, Requirement.Bound.POINT))).decision())
+        TrialResult elsewhere =
+                result(Optional.empty(), good).oneGroupOnly("PA").build();
+        assertThat(verdict(elsewhere, duty(Fixture.recovery(0.5, Requirement.Bound.POINT)))
+                        .decision())
                 .isEqualTo(Decision.RELEASE);
     }
 
     @Test
     void whatWasNotRunHolds() {
         Requirement machine = new Requirement(
-                Requirement.Figure.DECISION_RECOVERY,
-                Requirement.Unseen.MACHINE,
-                0.5,
-                Requirement.Bound.POINT,
-                0.9);
+                Requirement.Figure.DECISION_RECOVERY, Requirement.Unseen.MACHINE, 0.5, Requirement.Bound.POINT, 0.9);
         Verdict verdict = verdict(result(Optional.empty(), good).build(), duty(machine));
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         assertThat(verdict.mainReason()).contains("\"machine not seen\" was not run");

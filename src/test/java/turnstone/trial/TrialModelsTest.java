@@ -27,7 +27,8 @@ class TrialModelsTest {
         assertThat(models.find(TrialForm.THIS_FLEET, 3, "curlew@2026-01-01")).isPresent();
         assertThat(models.find(TrialForm.THIS_FLEET, 4, AVOCET)).isEmpty();
         assertThat(models.find(TrialForm.MACHINE_NOT_SEEN, 3, AVOCET)).isPresent();
-        assertThat(models.find(TrialForm.MACHINE_NOT_SEEN, 3, "curlew@2026-01-01")).isEmpty();
+        assertThat(models.find(TrialForm.MACHINE_NOT_SEEN, 3, "curlew@2026-01-01"))
+                .isEmpty();
         assertThat(models.find(TrialForm.MACHINE_NOT_SEEN, 4, AVOCET)).isEmpty();
         assertThat(models.compares()).isTrue();
         assertThat(models.size()).isEqualTo(2);
@@ -36,24 +37,26 @@ class TrialModelsTest {
     @Test
     void theTwoSidesAreAlike() {
         TrialModels.Builder builder = TrialModels.builder().thisFleet(1, model, Optional.empty());
-        assertThatThrownBy(() -> builder.thisFleet(2, model, Optional.of(model))).hasMessageContaining("has none");
+        assertThatThrownBy(() -> builder.thisFleet(2, model, Optional.of(model)))
+                .hasMessageContaining("has none");
         assertThatThrownBy(() -> builder.thisFleet(1, model, Optional.empty())).hasMessageContaining("twice");
-        assertThatThrownBy(() -> TrialModels.builder()
-                        .thisFleet(1, model, Optional.of(ModelFixture.onAnotherScale())))
+        assertThatThrownBy(() -> TrialModels.builder().thisFleet(1, model, Optional.of(ModelFixture.onAnotherScale())))
                 .hasMessageContaining("count scales");
         assertThat(builder.build().compares()).isFalse();
     }
 
     @Test
     void itTravelsAndCopies() throws IOException, ClassNotFoundException {
-        TrialModels models = TrialModels.builder().thisFleet(1, model, Optional.empty()).build();
+        TrialModels models =
+                TrialModels.builder().thisFleet(1, model, Optional.empty()).build();
         ByteArrayOutputStream bytes = new ByteArrayOutputStream();
         try (ObjectOutputStream out = new ObjectOutputStream(bytes)) {
             out.writeObject(models);
         }
         try (ObjectInputStream in = new ObjectInputStream(new ByteArrayInputStream(bytes.toByteArray()))) {
             TrialModels read = ((TrialModels) in.readObject()).copy();
-            assertThat(read.find(TrialForm.THIS_FLEET, 1, AVOCET).orElseThrow().inService()).isEmpty();
+            assertThat(read.find(TrialForm.THIS_FLEET, 1, AVOCET).orElseThrow().inService())
+                    .isEmpty();
         }
     }
 }

@@ -41,9 +41,7 @@ class TrialTallyTest {
         tally.add(WRONG, 3);
         tally.add(WRONG, 0);
         tally.add(TallyCell.noSignal("s2", "PET"), 2);
-        assertThat(tally.csv())
-                .isEqualTo(
-                        """
+        assertThat(tally.csv()).isEqualTo("""
                         showing,truth,decided,recognition,count
                         s10,PET,"PP, clear",unfamiliar,3
                         s2,PET,PET,familiar,5
