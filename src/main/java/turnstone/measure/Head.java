@@ -33,7 +33,7 @@ public final class Head implements Serializable {
     private final HeadMaps maps;
     private final HeadColumns columns;
     private final double[] reflectance;
-    private final double[] exponents;
+    private final Absorbances absorbances;
 
     private Head(HeadSpec spec, int inputs, HeadMaps maps, HeadColumns columns) {
         this.inputs = inputs;
@@ -52,7 +52,7 @@ public final class Head implements Serializable {
         takesLogarithm = spec.takesLogarithm();
         snvSpreadFloor = spec.snvSpreadFloor().orElse(ABSENT);
         reflectance = new double[corrects ? inputs : 0];
-        exponents = new double[takesLogarithm ? outputs : 0];
+        absorbances = new Absorbances(takesLogarithm ? outputs : 0);
     }
 
     private Head(Head other) {
@@ -72,7 +72,7 @@ public final class Head implements Serializable {
         maps = other.maps;
         columns = other.columns;
         reflectance = new double[other.reflectance.length];
-        exponents = new double[other.exponents.length];
+        absorbances = new Absorbances(other.absorbances.most());
     }
 
     /**
@@ -190,13 +190,15 @@ public final class Head implements Serializable {
             trouble.set(QuarantineReason.BAD_WHITE, bad, white[bad], dark[bad]);
             return false;
         }
-        reflectances(raw, from, dark, white, reflectance, inputs);
+        System.arraycopy(raw, from, reflectance, 0, inputs);
+        reflectances(reflectance, dark, white, inputs);
         return true;
     }
 
-    private static void reflectances(double[] raw, int from, double[] dark, double[] white, double[] out, int n) {
+    /** In place and from 0 on, so that compilers make vector code of it. Channels that no output needs may come out as anything. */
+    private static void reflectances(double[] values, double[] dark, double[] white, int n) {
         for (int c = 0; c < n; c++) {
-            out[c] = (raw[from + c] - dark[c]) / (white[c] - dark[c]);
+            values[c] = (values[c] - dark[c]) / (white[c] - dark[c]);
         }
     }
 
@@ -212,7 +214,7 @@ public final class Head implements Serializable {
             }
         }
         if (takesLogarithm) {
-            LaneMath.absorbances(out, to, n, exponents);
+            absorbances.apply(out, to, n);
         }
         return snvSpreadFloor == ABSENT ? HeadOutcome.ACCEPTED : standardise(out, to, trouble);
     }

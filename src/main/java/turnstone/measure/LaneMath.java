@@ -100,54 +100,59 @@ public final class LaneMath {
 
     /** The natural logarithm of a normal double above 0; any other argument gives a number of no meaning. */
     public static double log(double x) {
-        long bits = Double.doubleToRawLongBits(x);
-        long k = (bits - SQRT_HALF_BITS) >> 52;
-        double m = Double.longBitsToDouble(bits - (k << 52));
-        return k * LN2_HIGH + (k * LN2_LOW + logNearOne(m));
+        double k = exponent(x);
+        double m = mantissa(x);
+        double s = ratio(m);
+        return k * LN2_HIGH + (k * LN2_LOW + logNearOne(m, s, withHighTerms(s, lowTerms(s))));
     }
 
     /** log10(1/R) of a normal double above 0; any other argument gives a number of no meaning. */
     public static double absorbance(double reflectance) {
-        long bits = Double.doubleToRawLongBits(reflectance);
-        long k = (bits - SQRT_HALF_BITS) >> 52;
-        double m = Double.longBitsToDouble(bits - (k << 52));
-        return absorbance((double) k, m);
+        double m = mantissa(reflectance);
+        double s = ratio(m);
+        return absorbance(exponent(reflectance), m, s, withHighTerms(s, lowTerms(s)));
     }
 
-    /**
-     * {@link #absorbance} of n values, in place: the same operations on each, hence the same bits. Two loops, since compilers turn the second into vector code but not the
-     * moves of bits in the first.
-     *
-     * @param exponents scratch space for n numbers
-     */
-    static void absorbances(double[] values, int from, int n, double[] exponents) {
-        for (int i = 0; i < n; i++) {
-            long bits = Double.doubleToRawLongBits(values[from + i]);
-            long k = (bits - SQRT_HALF_BITS) >> 52;
-            exponents[i] = (double) k;
-            values[from + i] = Double.longBitsToDouble(bits - (k << 52));
-        }
-        for (int i = 0; i < n; i++) {
-            values[from + i] = absorbance(exponents[i], values[from + i]);
-        }
+    /** k of x = 2^k·m. */
+    static double exponent(double x) {
+        return (double) ((Double.doubleToRawLongBits(x) - SQRT_HALF_BITS) >> 52);
     }
 
-    private static double absorbance(double k, double m) {
-        // 0 - x and not -x: reflectance 1 gives +0.
-        return 0.0 - (k * LOG10_2_HIGH + (k * LOG10_2_LOW + logNearOne(m) * LOG10_E));
+    /** m of x = 2^k·m, in [√½, √2). */
+    static double mantissa(double x) {
+        long bits = Double.doubleToRawLongBits(x);
+        return Double.longBitsToDouble(bits - ((bits - SQRT_HALF_BITS) & 0xfff0_0000_0000_0000L));
     }
 
-    /** ln m for m in [√½, √2): m − 1 is exact there. The polynomial is evaluated in pairs, then pairs of pairs. */
-    private static double logNearOne(double m) {
+    /** s = f/(2 + f), f = m − 1, which is exact. */
+    static double ratio(double m) {
         double f = m - 1.0;
-        double s = f / (2.0 + f);
+        return f / (2.0 + f);
+    }
+
+    /** The first four terms of p, in pairs. */
+    static double lowTerms(double s) {
+        double z = s * s;
+        return (2.0 / 3 + z * (2.0 / 5)) + (z * z) * (2.0 / 7 + z * (2.0 / 9));
+    }
+
+    /** p from its first four terms and the other six. */
+    static double withHighTerms(double s, double low) {
         double z = s * s;
         double z2 = z * z;
         double z4 = z2 * z2;
-        double low = (2.0 / 3 + z * (2.0 / 5)) + z2 * (2.0 / 7 + z * (2.0 / 9));
         double middle = (2.0 / 11 + z * (2.0 / 13)) + z2 * (2.0 / 15 + z * (2.0 / 17));
-        double high = 2.0 / 19 + z * (2.0 / 21);
-        double p = low + z4 * (middle + z4 * high);
-        return f - s * (f - z * p);
+        return low + z4 * (middle + z4 * (2.0 / 19 + z * (2.0 / 21)));
+    }
+
+    private static double logNearOne(double m, double s, double p) {
+        double f = m - 1.0;
+        return f - s * (f - (s * s) * p);
+    }
+
+    /** log10(1/R) from its parts. */
+    static double absorbance(double k, double m, double s, double p) {
+        // 0 - x and not -x: reflectance 1 gives +0.
+        return 0.0 - (k * LOG10_2_HIGH + (k * LOG10_2_LOW + logNearOne(m, s, p) * LOG10_E));
     }
 }

@@ -113,7 +113,7 @@ class LaneMathTest {
     void arrayAndScalarFormsAreEqual() {
         double[] values = new Random(3).doubles(1000, 1e-3, 2).toArray();
         double[] copy = values.clone();
-        LaneMath.absorbances(copy, 1, 998, new double[998]);
+        new Absorbances(998).apply(copy, 1, 998);
         assertThat(copy[0]).isEqualTo(values[0]);
         assertThat(copy[999]).isEqualTo(values[999]);
         for (int i = 1; i < 999; i++) {
