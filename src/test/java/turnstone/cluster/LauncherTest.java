@@ -86,6 +86,7 @@ class LauncherTest {
         refusedInOneLine(launch(LAUNCHER, Map.of("TURNSTONE_BUILD", "yes"), "post"), 2, "TURNSTONE_BUILD", "\"yes\"");
         refusedInOneLine(launch(LAUNCHER, Map.of("SPARK_HOME", "/none"), "post", "--master", "yarn"), 2, "SPARK_HOME");
         refusedInOneLine(launch(LAUNCHER, Map.of(), "post", "--master"), 2, "--master");
+        refusedInOneLine(launch(LAUNCHER, Map.of(), "post", "--master=spork://x"), 2, "spork://x", "yarn");
         refusedInOneLine(launch(LAUNCHER, Map.of(), "post", "--", "--queue", "night"), 2, "spark-submit", "--master");
     }
 
