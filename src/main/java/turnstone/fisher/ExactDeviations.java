@@ -34,7 +34,7 @@ final class ExactDeviations {
                         "scatter of channel " + (i + 1) + " is below zero: not sums of records");
             }
             Kernels.divide((double) moments.records(), high, low, 0, i + 1);
-            Kernels.multiplyAdd(part.weight(), 0, high, low, 0, lower.high, lower.low, i * lower.columns, i + 1);
+            Kernels.multiplyAdd(part.weight(), 0, high, low, lower.high[i], lower.low[i], 0, i + 1);
         }
     }
 
@@ -78,7 +78,7 @@ final class ExactDeviations {
         }
         Kernels.divide((double) total.records(), high, low, 0, d);
         Kernels.divide((double) part.records(), high, low, 0, d);
-        Kernels.multiplyAdd(weight.high(), weight.low(), high, low, 0, into.high, into.low, row * into.columns, d);
+        Kernels.multiplyAdd(weight.high(), weight.low(), high, low, into.high[row], into.low[row], 0, d);
     }
 
     private static boolean sumsFitWord(Moments moments) {

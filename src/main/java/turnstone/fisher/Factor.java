@@ -38,7 +38,7 @@ final class Factor {
         Factor factor = new Factor(symmetric);
         int d = symmetric.rows;
         ExtendedMatrix multipliers = new ExtendedMatrix(PANEL, d);
-        double[] tops = new double[PANEL * d];
+        double[][] tops = new double[PANEL][d];
         for (int first = 0; first < d; first += PANEL) {
             int end = Math.min(first + PANEL, d);
             factor.eliminatePanel(first, end, limit, multipliers);
@@ -55,96 +55,84 @@ final class Factor {
             pivotLow[k] = pivot.low();
             if (pivot.high() <= limit || pivot.high() == 0) {
                 setAside[k] = true;
-                Arrays.fill(rows.high, k * d + k, k * d + d, 0);
-                Arrays.fill(rows.low, k * d + k, k * d + d, 0);
+                Arrays.fill(rows.high[k], k, d, 0);
+                Arrays.fill(rows.low[k], k, d, 0);
             }
-            int at = (k - first) * d;
-            System.arraycopy(rows.high, k * d, multipliers.high, at, d);
-            System.arraycopy(rows.low, k * d, multipliers.low, at, d);
+            double[] factorHigh = multipliers.high[k - first];
+            double[] factorLow = multipliers.low[k - first];
+            System.arraycopy(rows.high[k], 0, factorHigh, 0, d);
+            System.arraycopy(rows.low[k], 0, factorLow, 0, d);
             if (!setAside[k]) {
                 DoubleDouble factor = DoubleDouble.ONE.over(pivot).negated();
-                Kernels.scale(factor.high(), factor.low(), multipliers.high, multipliers.low, at + k, d - k);
+                Kernels.scale(factor.high(), factor.low(), factorHigh, factorLow, k, d);
             }
             for (int i = k + 1; i < end; i++) {
                 Kernels.multiplyAdd(
-                        multipliers.high[at + i],
-                        multipliers.low[at + i],
-                        rows.high,
-                        rows.low,
-                        k * d + i,
-                        rows.high,
-                        rows.low,
-                        i * d + i,
-                        d - i);
+                        factorHigh[i], factorLow[i], rows.high[k], rows.low[k], rows.high[i], rows.low[i], i, d);
             }
         }
     }
 
-    private void updateTrailing(int first, int end, ExtendedMatrix multipliers, double[] tops) {
+    private void updateTrailing(int first, int end, ExtendedMatrix multipliers, double[][] tops) {
         int d = rows.columns;
         for (int k = first; k < end; k++) {
             for (int j = end; j < d; j++) {
-                tops[(k - first) * d + j] = Kernels.top(rows.high[k * d + j]);
+                tops[k - first][j] = Kernels.top(rows.high[k][j]);
             }
         }
         for (int tile = end; tile < d; tile += TILE) {
             int tileEnd = Math.min(tile + TILE, d);
             for (int i = end; i < tileEnd; i++) {
                 int from = Math.max(i, tile);
-                updateRow(first, end, i, from, tileEnd - from, multipliers, tops);
+                updateRow(first, end, i, from, tileEnd, multipliers, tops);
             }
         }
     }
 
-    /** Row i less its multiples of the panel's rows, n columns from {@code from}. */
-    private void updateRow(int first, int end, int i, int from, int n, ExtendedMatrix multipliers, double[] tops) {
-        int d = rows.columns;
+    /** Row i less its multiples of the panel's rows, columns {@code from} to {@code to}. */
+    private void updateRow(int first, int end, int i, int from, int to, ExtendedMatrix multipliers, double[][] tops) {
         for (int k = first; k < end; k++) {
-            int m = (k - first) * d;
+            int m = k - first;
             subtract(
-                    multipliers.high[m + i],
-                    multipliers.low[m + i],
-                    rows.high,
-                    rows.low,
-                    tops,
-                    k * d + from,
-                    m + from,
-                    i * d + from,
-                    n);
+                    multipliers.high[m][i],
+                    multipliers.low[m][i],
+                    rows.high[k],
+                    rows.low[k],
+                    tops[m],
+                    rows.high[i],
+                    rows.low[i],
+                    from,
+                    to);
         }
     }
 
-    /**
-     * {@link Kernels#multiplyAdd} within one pair of arrays, with the upper halves of x given: element j of y, at yFrom, gets a·x.
-     *
-     * <p>Rows x and y of the matrix differ, so the ranges do not overlap.
-     */
+    /** {@link Kernels#multiplyAdd} with the upper halves of x given: y[j] += a·x[j]. */
     private static void subtract(
             double aHigh,
             double aLow,
-            double[] high,
-            double[] low,
-            double[] tops,
-            int xFrom,
-            int topFrom,
-            int yFrom,
-            int n) {
+            double[] xHigh,
+            double[] xLow,
+            double[] xTops,
+            double[] yHigh,
+            double[] yLow,
+            int from,
+            int to) {
         double aTop = Kernels.top(aHigh);
         double aRest = aHigh - aTop;
-        for (int j = 0; j < n; j++) {
-            double x = high[xFrom + j];
-            double xTop = tops[topFrom + j];
+        for (int j = from; j < to; j++) {
+            double x = xHigh[j];
+            double xTop = xTops[j];
             double xRest = x - xTop;
             double p = aHigh * x;
             double e = ((aTop * xTop - p) + aTop * xRest + aRest * xTop) + aRest * xRest;
-            e += aHigh * low[xFrom + j] + aLow * x;
-            double y = high[yFrom + j];
+            e += aHigh * xLow[j] + aLow * x;
+            double y = yHigh[j];
             double s = y + p;
             double part = s - y;
-            double rest = ((y - (s - part)) + (p - part)) + (e + low[yFrom + j]);
+            double rest = ((y - (s - part)) + (p - part)) + (e + yLow[j]);
             double sum = s + rest;
-            high[yFrom + j] = sum;
-            low[yFrom + j] = rest - (sum - s);
+            yHigh[j] = sum;
+            yLow[j] = rest - (sum - s);
         }
     }
 

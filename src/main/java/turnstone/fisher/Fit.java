@@ -180,7 +180,7 @@ public final class Fit {
     private static ExtendedMatrix extended(double[][] rows, int columns) {
         ExtendedMatrix matrix = new ExtendedMatrix(rows.length, columns);
         for (int i = 0; i < rows.length; i++) {
-            System.arraycopy(rows[i], 0, matrix.high, i * columns, columns);
+            System.arraycopy(rows[i], 0, matrix.high[i], 0, columns);
         }
         return matrix;
     }

@@ -67,7 +67,7 @@ final class HeadScatter {
         for (int i = 0; i < d; i++) {
             DoubleDouble factor = apart.at(0, i).times(part.weightedRecords());
             Kernels.multiplyAdd(
-                    factor.high(), factor.low(), apart.high, apart.low, 0, within.high, within.low, i * d, i + 1);
+                    factor.high(), factor.low(), apart.high[0], apart.low[0], within.high[i], within.low[i], 0, i + 1);
         }
     }
 
@@ -76,12 +76,12 @@ final class HeadScatter {
         ExtendedMatrix steps = steps(scale);
         for (int i = 0; i < d; i++) {
             DoubleDouble step = steps.at(0, i);
-            Kernels.multiply(steps.high, steps.low, 0, within.high, within.low, i * d, i + 1);
-            Kernels.scale(step.high(), step.low(), within.high, within.low, i * d, i + 1);
+            Kernels.multiply(steps.high[0], steps.low[0], within.high[i], within.low[i], 0, i + 1);
+            Kernels.scale(step.high(), step.low(), within.high[i], within.low[i], 0, i + 1);
         }
         within.mirrorLower();
         for (int k = 0; k < deviations.rows; k++) {
-            Kernels.multiply(steps.high, steps.low, 0, deviations.high, deviations.low, k * d, d);
+            Kernels.multiply(steps.high[0], steps.low[0], deviations.high[k], deviations.low[k], 0, d);
         }
     }
 

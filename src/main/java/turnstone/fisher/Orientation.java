@@ -127,8 +127,8 @@ public final class Orientation {
         }
         DoubleDouble inverse =
                 DoubleDouble.ONE.over(chosen.dotRows(0, chosen, 0).root());
-        Arrays.fill(rows.high, k * d, k * d + d, 0);
-        Arrays.fill(rows.low, k * d, k * d + d, 0);
+        Arrays.fill(rows.high[k], 0);
+        Arrays.fill(rows.low[k], 0);
         rows.addRow(k, inverse, chosen, 0);
     }
 
@@ -153,7 +153,7 @@ public final class Orientation {
     private static ExtendedMatrix whitened(double[][] gram, ExtendedMatrix rows) {
         ExtendedMatrix matrix = new ExtendedMatrix(gram.length, gram.length);
         for (int i = 0; i < gram.length; i++) {
-            System.arraycopy(gram[i], 0, matrix.high, i * gram.length, gram.length);
+            System.arraycopy(gram[i], 0, matrix.high[i], 0, gram.length);
         }
         Factor factor = Factor.of(matrix, 0);
         if (!factor.setAside().isEmpty()) {

@@ -32,8 +32,10 @@ final class Shrinkage {
     static double rho(ExtendedMatrix within, double trace, long units) {
         int p = within.columns;
         double squares = 0;
-        for (double element : within.high) {
-            squares += element * element;
+        for (double[] row : within.high) {
+            for (double element : row) {
+                squares += element * element;
+            }
         }
         double above = (1 - 2.0 / p) * squares + trace * trace;
         double below = (units + 1 - 2.0 / p) * (squares - trace * trace / p);

@@ -33,7 +33,7 @@ final class Singularity {
     void refuseConstantChannels() {
         ExtendedMatrix within = scatter.within();
         List<Integer> constant = IntStream.range(0, within.columns)
-                .filter(i -> within.high[i * within.columns + i] == 0)
+                .filter(i -> within.high[i][i] == 0)
                 .boxed()
                 .toList();
         if (constant.isEmpty()) {

@@ -9,11 +9,11 @@ import java.util.function.UnaryOperator;
  * is the same everywhere.
  */
 final class SpectralEstimate {
-    private static final double ENOUGH = 1e-4;
+    private static final double ENOUGH = 1e-3;
     private static final int MOST_STEPS = 200;
 
     private final int size;
-    private final double[] rows;
+    private final double[][] rows;
     private final double[] pivots;
     private final double[] unitDiagonal;
 
@@ -28,7 +28,7 @@ final class SpectralEstimate {
         // Diagonal of S from S = RᵀD⁻¹R, since the factor overwrote it.
         for (int k = 0; k < size; k++) {
             for (int j = k; j < size; j++) {
-                double element = rows[k * size + j];
+                double element = rows[k][j];
                 unitDiagonal[j] += element * element / pivots[k];
             }
         }
@@ -125,13 +125,12 @@ final class SpectralEstimate {
         double[] y = new double[size];
         for (int k = 0; k < size; k++) {
             double sum = 0;
-            int from = k * size;
             for (int j = k; j < size; j++) {
-                sum += rows[from + j] * x[j];
+                sum += rows[k][j] * x[j];
             }
             double factor = sum / pivots[k];
             for (int j = k; j < size; j++) {
-                y[j] += factor * rows[from + j];
+                y[j] += factor * rows[k][j];
             }
         }
         return y;
@@ -142,16 +141,14 @@ final class SpectralEstimate {
         double[] x = b.clone();
         for (int k = 0; k < size; k++) {
             double factor = x[k] / pivots[k];
-            int from = k * size;
             for (int j = k + 1; j < size; j++) {
-                x[j] -= factor * rows[from + j];
+                x[j] -= factor * rows[k][j];
             }
         }
         for (int k = size - 1; k >= 0; k--) {
             double sum = x[k];
-            int from = k * size;
             for (int j = k + 1; j < size; j++) {
-                sum -= rows[from + j] * x[j];
+                sum -= rows[k][j] * x[j];
             }
             x[k] = sum / pivots[k];
         }

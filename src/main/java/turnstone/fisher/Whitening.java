@@ -30,20 +30,18 @@ final class Whitening {
     void whiten(ExtendedMatrix right) {
         ExtendedMatrix rows = factor.rows();
         for (int row = 0; row < right.rows; row++) {
-            int from = row * size;
             for (int k = 0; k < size; k++) {
                 DoubleDouble z = right.at(row, k);
                 DoubleDouble multiplier = z.times(new DoubleDouble(minusInverseHigh[k], minusInverseLow[k]));
                 Kernels.multiplyAdd(
                         multiplier.high(),
                         multiplier.low(),
-                        rows.high,
-                        rows.low,
-                        k * size + k + 1,
-                        right.high,
-                        right.low,
-                        from + k + 1,
-                        size - k - 1);
+                        rows.high[k],
+                        rows.low[k],
+                        right.high[row],
+                        right.low[row],
+                        k + 1,
+                        size);
                 right.set(row, k, z.times(inverseRoots[k]));
             }
         }
@@ -54,7 +52,6 @@ final class Whitening {
         // Column i of Lᵀ is row i of L: transposed once, so that the inner loop runs along rows.
         ExtendedMatrix lower = unitLower();
         for (int row = 0; row < right.rows; row++) {
-            int from = row * size;
             for (int k = 0; k < size; k++) {
                 right.set(row, k, right.at(row, k).times(inverseRoots[k]));
             }
@@ -63,12 +60,11 @@ final class Whitening {
                 Kernels.multiplyAdd(
                         multiplier.high(),
                         multiplier.low(),
-                        lower.high,
-                        lower.low,
-                        i * size,
-                        right.high,
-                        right.low,
-                        from,
+                        lower.high[i],
+                        lower.low[i],
+                        right.high[row],
+                        right.low[row],
+                        0,
                         i);
             }
         }
@@ -77,7 +73,7 @@ final class Whitening {
     private ExtendedMatrix unitLower() {
         ExtendedMatrix scaled = factor.rows().copy();
         for (int k = 0; k < size; k++) {
-            Kernels.scale(-minusInverseHigh[k], -minusInverseLow[k], scaled.high, scaled.low, k * size + k, size - k);
+            Kernels.scale(-minusInverseHigh[k], -minusInverseLow[k], scaled.high[k], scaled.low[k], k, size);
         }
         return scaled.transposed();
     }

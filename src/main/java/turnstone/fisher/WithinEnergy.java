@@ -7,7 +7,7 @@ final class WithinEnergy {
     /** A vector that lost all but this share of its length to the others lies in their span. */
     private static final double IN_SPAN = 1e-8;
 
-    private final double[] within;
+    private final double[][] within;
     private final int d;
     private final double degreesOfFreedom;
 
@@ -21,7 +21,7 @@ final class WithinEnergy {
     double storageCost(ExtendedMatrix axes) {
         double largest = 0;
         for (int i = 0; i < axes.rows; i++) {
-            double[] cut = Arrays.copyOfRange(axes.low, i * d, i * d + d);
+            double[] cut = axes.low[i];
             double square = dot(times(cut), cut) / degreesOfFreedom;
             largest = Math.max(largest, square);
         }
@@ -49,7 +49,7 @@ final class WithinEnergy {
         double whole = 0;
         double[] row = new double[d];
         for (int i = 0; i < d; i++) {
-            System.arraycopy(within, i * d, row, 0, d);
+            System.arraycopy(within[i], 0, row, 0, d);
             whole += row[i];
             for (int k = 0; k < r; k++) {
                 add(-basis[k][i], both[k], row);
@@ -93,10 +93,8 @@ final class WithinEnergy {
 
     private double[] times(double[] vector) {
         double[] image = new double[d];
-        double[] row = new double[d];
         for (int i = 0; i < d; i++) {
-            System.arraycopy(within, i * d, row, 0, d);
-            add(vector[i], row, image);
+            add(vector[i], within[i], image);
         }
         return image;
     }

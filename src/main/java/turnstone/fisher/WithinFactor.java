@@ -78,7 +78,7 @@ final class WithinFactor {
         int p = symmetric.columns;
         double[] powers = new double[p];
         for (int i = 0; i < p; i++) {
-            double diagonal = symmetric.high[i * p + i];
+            double diagonal = symmetric.high[i][i];
             powers[i] = diagonal > 0 ? Math.scalb(1.0, -Math.floorDiv(Math.getExponent(diagonal), 2)) : 1;
         }
         scale(symmetric, powers);
@@ -89,11 +89,10 @@ final class WithinFactor {
         int p = symmetric.columns;
         for (int i = 0; i < p; i++) {
             double own = powers[i];
-            int from = i * p;
             for (int j = 0; j < p; j++) {
                 double factor = own * powers[j];
-                symmetric.high[from + j] *= factor;
-                symmetric.low[from + j] *= factor;
+                symmetric.high[i][j] *= factor;
+                symmetric.low[i][j] *= factor;
             }
         }
     }
@@ -117,8 +116,8 @@ final class WithinFactor {
     private void equilibrateRows(ExtendedMatrix rows) {
         for (int k = 0; k < rows.rows; k++) {
             for (int j = 0; j < rows.columns; j++) {
-                rows.high[k * rows.columns + j] *= equilibration[j];
-                rows.low[k * rows.columns + j] *= equilibration[j];
+                rows.high[k][j] *= equilibration[j];
+                rows.low[k][j] *= equilibration[j];
             }
         }
     }

@@ -99,7 +99,8 @@ class RegularisedTest {
                 .isDeepEqualTo(Expect.matrix(answer.get("confusion_truth_by_decided")));
         if (answer.has("axis_unit_ridged_Sw_norm")) {
             double[] expected = Json.doubles(answer.get("axis_unit_ridged_Sw_norm"));
-            // Where channels differ in size by more than the sign rule's share, the reference took the first component's sign.
+            // Where channels differ in size by more than the sign rule's share, the reference took the first
+            // component's sign.
             double sign = given.name().contains("2^-60") ? -1 : 1;
             for (int c = 0; c < expected.length; c++) {
                 Expect.relative("component", sign * fit.axes()[0][c], expected[c], BOUND);
