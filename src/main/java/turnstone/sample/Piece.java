@@ -28,8 +28,8 @@ record Piece(
     static final int ON_TRAY = 12;
 
     private static final double LABEL_SHARE = 0.15;
-    private static final double TRAY_SPREAD = 0.035;
-    private static final double PIECE_SPREAD = 0.05;
+    private static final double TRAY_SPREAD = 0.05;
+    private static final double PIECE_SPREAD = 0.08;
 
     static List<Piece> onTray(long seed, int material, long tray) {
         Substance substance = Substance.ALL.get(material);

@@ -9,8 +9,8 @@ final class Scene {
     static final int LARGEST_COUNT = 16_383;
 
     private static final long RECORD_MS = 4;
-    private static final double READ_NOISE_COUNTS = 4;
-    private static final double SHOT_NOISE_VARIANCE_PER_COUNT = 0.06;
+    private static final double READ_NOISE_COUNTS = 8;
+    private static final double SHOT_NOISE_VARIANCE_PER_COUNT = 0.12;
     private static final double BLACK_REFLECTANCE = 0.022;
     private static final double LN_10 = StrictMath.log(10);
 

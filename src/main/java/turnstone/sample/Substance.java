@@ -58,11 +58,11 @@ record Substance(String name, String slug, String grams_per_cm2, double base, do
                     0.02,
                     List.of(
                             new Band(1155, 9, 0.104),
-                            new Band(1209.6, 11.5, 0.414),
-                            new Band(1391.2, 10.4, 0.232),
-                            new Band(1413, 10.2, 0.250),
+                            new Band(1209.75, 11.3, 0.416),
+                            new Band(1391.5, 10.25, 0.227),
+                            new Band(1413, 10.1, 0.255),
                             new Band(1535, 16, 0.060),
-                            new Band(1727.5, 14, 0.880))),
+                            new Band(1727.7, 14, 0.890))),
             new Substance(
                     "PP",
                     "pp",
