@@ -44,7 +44,18 @@ public final class Instrument implements Serializable {
             return firstColumn <= beltColumn && beltColumn <= lastColumn;
         }
 
-        double[] wavelength_nm() {
+        /** The first belt column of it. */
+        public int firstColumn() {
+            return firstColumn;
+        }
+
+        /** The last belt column of it. */
+        public int lastColumn() {
+            return lastColumn;
+        }
+
+        /** One wavelength per channel in nm. */
+        public double[] wavelength_nm() {
             return wavelength_nm.clone();
         }
     }

@@ -38,7 +38,13 @@ final class PlantFingerprint {
         node.put("name", instrument.name()).put("channels", instrument.channels());
         node.set("wavelength_nm", Json.array(instrument.wavelength_nm()));
         instrument.deadChannels().forEach(node.putArray("dead")::add);
-        node.put("bands", instrument.bands().size());
+        ArrayNode bands = node.putArray("bands");
+        for (Instrument.Band band : instrument.bands()) {
+            bands.addObject()
+                    .put("firstColumn", band.firstColumn())
+                    .put("lastColumn", band.lastColumn())
+                    .set("wavelength_nm", Json.array(band.wavelength_nm()));
+        }
     }
 
     private static void put(ObjectNode node, RefitRecipe refit) {

@@ -11,6 +11,7 @@ import java.util.Optional;
 import turnstone.json.Json;
 import turnstone.measure.ChannelScale;
 import turnstone.measure.CountScale;
+import turnstone.measure.Head;
 import turnstone.measure.HeadSpec;
 import turnstone.measure.HeadSpecBuilder;
 import turnstone.measure.InputKind;
@@ -44,7 +45,23 @@ final class PretreatmentReader {
         }
         references.ifPresent(table -> builder.correct(table.maxAge_ms()));
         head.ifPresent(entry -> steps(entry, builder));
-        return head.orElse(pretreatment).checked(builder::build);
+        HeadSpec spec = head.orElse(pretreatment).checked(builder::build);
+        if (resampling == Resampling.FROM_INSTRUMENT) {
+            checkRange(root, spec, head, instruments);
+        }
+        return spec;
+    }
+
+    /** The axis, less its mask, must lie within each instrument's wavelengths. */
+    private static void checkRange(Entry root, HeadSpec spec, Optional<Entry> head, List<Instrument> instruments) {
+        HeadSpecBuilder resampler = HeadSpec.builder(spec.channels()).axis(spec.axis_nm(), Resampling.FROM_INSTRUMENT);
+        head.ifPresent(entry -> mask(entry, resampler));
+        HeadSpec resampling = resampler.build();
+        List<Entry> entries = root.at("instruments").items();
+        for (int i = 0; i < entries.size(); i++) {
+            Instrument instrument = instruments.get(i);
+            entries.get(i).checked(() -> Head.of(resampling, instrument, null));
+        }
     }
 
     private static Resampling resampling(
@@ -81,7 +98,16 @@ final class PretreatmentReader {
         if (head.on("log").orElse(false)) {
             builder.absorbance();
         }
-        for (Entry range : ranges(head)) {
+        mask(head, builder);
+        if (head.on("snv").orElse(false)) {
+            builder.snv(head.number("snvSpreadFloor", USUAL_SPREAD_FLOOR));
+        } else if (head.has("snvSpreadFloor")) {
+            throw head.at("snvSpreadFloor").fault("a spread floor without SNV").expected("snv: on");
+        }
+    }
+
+    private static void mask(Entry head, HeadSpecBuilder builder) {
+        for (Entry range : head.optional("mask").map(Entry::items).orElse(List.of())) {
             if (byWavelength(range)) {
                 builder.dropWavelengths(
                         range.at("from_nm").number(), range.at("to_nm").number());
@@ -91,18 +117,9 @@ final class PretreatmentReader {
                         range.at("toChannel").whole() - 1);
             }
         }
-        if (head.on("snv").orElse(false)) {
-            builder.snv(head.number("snvSpreadFloor", USUAL_SPREAD_FLOOR));
-        } else if (head.has("snvSpreadFloor")) {
-            throw head.at("snvSpreadFloor").fault("a spread floor without SNV").expected("snv: on");
-        }
     }
 
-    static List<Entry> ranges(Entry holder) {
-        return holder.optional("mask").map(Entry::items).orElse(List.of());
-    }
-
-    static boolean byWavelength(Entry range) {
+    private static boolean byWavelength(Entry range) {
         boolean wavelengths = range.has("from_nm") || range.has("to_nm");
         boolean channels = range.has("fromChannel") || range.has("toChannel");
         if (wavelengths == channels) {

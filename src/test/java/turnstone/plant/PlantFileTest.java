@@ -135,7 +135,7 @@ class PlantFileTest {
                 "window: 9|window: 8|window: 8|a smoothing window must be odd",
                 "window: 9|window: 129|window: 129|a smoothing window longer than the channels",
                 "noSignalBelow: 0.06|noSignalBelow: 0.0001|  head:|no record could be no signal",
-                "input: counts|input: absorbance|  head:|dark and white correct raw counts only",
+                "input: counts|input: absorbance|  head:|the logarithm of what is a logarithm already",
                 "    beltColumn: belt_column     #|    # |records:|no columns.beltColumn",
                 "step: 0.00001|step: 0|step: 0|countScale.step: too small; found 0, expected more than 0",
                 "grey crates: 3|grey crates: 8|grey crates|too large; found 8, expected at most 7",
@@ -190,7 +190,9 @@ class PlantFileTest {
         assertThat(plant.instrument("dunlin", LocalDate.of(2026, 3, 9)).map(Instrument::name))
                 .hasValue("dunlin@2026-03-09");
         assertThat(plant.instrument("heron", LocalDate.of(2026, 3, 9))).isEmpty();
-        assertThat(plant.instrument("curlew", LocalDate.of(2026, 3, 1)).orElseThrow().deadChannels())
+        assertThat(plant.instrument("curlew", LocalDate.of(2026, 3, 1))
+                        .orElseThrow()
+                        .deadChannels())
                 .containsExactly(76);
     }
 
