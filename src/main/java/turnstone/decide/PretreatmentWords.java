@@ -10,8 +10,20 @@ import java.util.Set;
 final class PretreatmentWords {
     private static final double MILLISECONDS_PER_HOUR = 3_600_000;
     private static final Set<String> WORDED = Set.of(
-            "input", "channels", "axis_nm", "resampled", "saturatedAt", "deadAtOrBelow", "maxWhiteAge_ms", "maxDarkAge_ms",
-            "floor", "noSignalBelow", "logarithm", "mask", "snvSpreadFloor", "steps");
+            "input",
+            "channels",
+            "axis_nm",
+            "resampled",
+            "saturatedAt",
+            "deadAtOrBelow",
+            "maxWhiteAge_ms",
+            "maxDarkAge_ms",
+            "floor",
+            "noSignalBelow",
+            "logarithm",
+            "mask",
+            "snvSpreadFloor",
+            "steps");
 
     private final List<String> words = new ArrayList<>();
 
@@ -53,7 +65,8 @@ final class PretreatmentWords {
         String kind = step.path("step").asText();
         if (kind.equals("savitzky-golay")) {
             words.add("Savitzky–Golay over " + step.path("window").asText() + " channels, order "
-                    + step.path("order").asText() + ", derivative " + step.path("derivative").asText());
+                    + step.path("order").asText() + ", derivative "
+                    + step.path("derivative").asText());
         } else if (kind.equals("bins")) {
             words.add("bins of " + step.path("width").asText());
         } else {
@@ -64,7 +77,8 @@ final class PretreatmentWords {
     private void drop(JsonNode range) {
         words.add(
                 range.has("from_nm")
-                        ? "without " + range.path("from_nm").asText() + " to " + range.path("to_nm").asText() + " nm"
+                        ? "without " + range.path("from_nm").asText() + " to "
+                                + range.path("to_nm").asText() + " nm"
                         : "without channels " + range.path("fromChannel").asText() + " to "
                                 + range.path("toChannel").asText());
     }
@@ -78,7 +92,10 @@ final class PretreatmentWords {
     private void age(JsonNode node, String key, String reference) {
         if (node.hasNonNull(key)) {
             words.add(String.format(
-                    Locale.ROOT, "%s at most %.1f h old", reference, node.path(key).doubleValue() / MILLISECONDS_PER_HOUR));
+                    Locale.ROOT,
+                    "%s at most %.1f h old",
+                    reference,
+                    node.path(key).doubleValue() / MILLISECONDS_PER_HOUR));
         }
     }
 }

@@ -34,19 +34,16 @@ class ModelPageTest {
 
     @Test
     void pretreatmentIsSaidInWords() {
-        JsonNode head = Json.read(
-                """
+        JsonNode head = Json.read("""
                 {"input": "raw counts", "channels": 4, "axis_nm": [900.0, 1000.0, 1100.0], "resampled": true,
                  "maxWhiteAge_ms": 28800000, "logarithm": "log10(1/R)", "mask": [{"from_nm": 900.0, "to_nm": 950.0}],
                  "snvSpreadFloor": 0.01, "later": 7}
-                """
-                        .getBytes(StandardCharsets.UTF_8),
-                "head");
+                """.getBytes(StandardCharsets.UTF_8), "head");
         assertThat(PretreatmentWords.of(head))
-                .isEqualTo("raw counts; 4 channels; resampled to 3 wavelengths, 900.0 to 1100.0 nm; white at most 8.0 h old;"
-                        + " log10(1/R); without 900.0 to 950.0 nm; SNV with spread at least 0.01; later 7");
-        TailSpec tail = TailSpec.of(
-                new TailSpec.SavitzkyGolay(7, 2, 1), new TailSpec.Bins(2), new TailSpec.Mask(0, 3));
+                .isEqualTo(
+                        "raw counts; 4 channels; resampled to 3 wavelengths, 900.0 to 1100.0 nm; white at most 8.0 h old;"
+                                + " log10(1/R); without 900.0 to 950.0 nm; SNV with spread at least 0.01; later 7");
+        TailSpec tail = TailSpec.of(new TailSpec.SavitzkyGolay(7, 2, 1), new TailSpec.Bins(2), new TailSpec.Mask(0, 3));
         assertThat(PretreatmentWords.of(tail.json()))
                 .isEqualTo("Savitzky–Golay over 7 channels, order 2, derivative 1; bins of 2; without channels 1 to 4");
         assertThat(PretreatmentWords.of(TailSpec.none().json())).isEqualTo("values as they come");
