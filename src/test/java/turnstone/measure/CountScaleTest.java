@@ -39,7 +39,8 @@ class CountScaleTest {
 
     @Test
     void offsetComesOffBeforeTheDivision() {
-        // x/step − offset/step would give another rounding: 1.5 here is (3.0 − 1.5)/1.
+        // At a half x/step − offset/step rounds the other way: 10 where (x − offset)/step gives 9.
+        assertThat(count(scale("0.3", "0.1", Precision.COARSE), 1.25)).isEqualTo(9);
         assertThat(count(scale("1.5", "1", Precision.COARSE), 3.0)).isEqualTo(2);
         assertThat(count(scale("-10", "0.25", Precision.COARSE), 0)).isEqualTo(40);
     }
