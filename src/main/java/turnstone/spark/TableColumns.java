@@ -1,0 +1,74 @@
+package turnstone.spark;
+
+import java.io.Serializable;
+import java.util.ArrayList;
+import java.util.EnumMap;
+import java.util.HashSet;
+import java.util.List;
+import java.util.Map;
+import java.util.Set;
+import turnstone.fault.Fault;
+
+/**
+ * The columns to read from a table, found by name in what it has.
+ *
+ * @param texts columns read as text: keys first, then those carried through
+ * @param keyIndex where in {@code texts} each key is
+ * @param layout array or columns
+ * @param channels the array column, or one column per channel
+ */
+record TableColumns(
+        List<String> texts, Map<KeyColumn, Integer> keyIndex, ColumnNames.Layout layout, List<String> channels)
+        implements Serializable {
+
+    static TableColumns resolve(ColumnNames names, List<String> available, String place) {
+        Set<String> present = new HashSet<>(available);
+        List<String> texts = new ArrayList<>();
+        Map<KeyColumn, Integer> keyIndex = new EnumMap<>(KeyColumn.class);
+        for (Map.Entry<KeyColumn, String> key : names.keys().entrySet()) {
+            require(present, key.getValue(), key.getKey().label(), available, place);
+            keyIndex.put(key.getKey(), texts.size());
+            texts.add(key.getValue());
+        }
+        List<String> channels = new ArrayList<>(names.channels());
+        if (names.layout() == ColumnNames.Layout.ALL_OTHERS) {
+            available.stream().filter(column -> !texts.contains(column)).forEach(channels::add);
+        }
+        for (String channel : channels) {
+            require(present, channel, "channel", available, place);
+        }
+        if (channels.isEmpty()) {
+            throw Fault.input("the table has no column left for channels").at(place);
+        }
+        if (names.others() == ColumnNames.Others.CARRY) {
+            Set<String> used = new HashSet<>(channels);
+            used.addAll(texts);
+            available.stream().filter(column -> !used.contains(column)).forEach(texts::add);
+        }
+        ColumnNames.Layout layout =
+                names.layout() == ColumnNames.Layout.ARRAY ? ColumnNames.Layout.ARRAY : ColumnNames.Layout.COLUMNS;
+        return new TableColumns(List.copyOf(texts), keyIndex, layout, List.copyOf(channels));
+    }
+
+    private static void require(
+            Set<String> present, String column, String meaning, List<String> available, String place) {
+        if (!present.contains(column)) {
+            throw Fault.input("the " + meaning + " column \"" + column + "\" is missing")
+                    .at(place)
+                    .found("columns " + abridged(available))
+                    .remedy("map the column by its name in the file");
+        }
+    }
+
+    private static String abridged(List<String> names) {
+        int shown = 12;
+        return names.size() <= shown
+                ? String.join(", ", names)
+                : String.join(", ", names.subList(0, shown)) + ", … (" + names.size() + ")";
+    }
+
+    /** Where in the texts a key is, or -1. */
+    int index(KeyColumn key) {
+        return keyIndex.getOrDefault(key, -1);
+    }
+}
