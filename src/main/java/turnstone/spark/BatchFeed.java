@@ -17,6 +17,7 @@ import org.apache.spark.sql.execution.SparkPlan;
 import org.apache.spark.sql.execution.WholeStageCodegenExec;
 import org.apache.spark.sql.vectorized.ColumnarBatch;
 import scala.jdk.javaapi.CollectionConverters;
+import turnstone.measure.SourceType;
 
 /**
  * Records from the column batches of a file scan, without the turn into rows.
@@ -63,6 +64,11 @@ final class BatchFeed implements Feed {
                 .toJavaRDD()
                 .mapPartitions(
                         (Iterator<ColumnarBatch> batches) -> task.run(new RowCursor(new BatchRows(batches), columns)));
+    }
+
+    @Override
+    public SourceType sourceType() {
+        return layout.sourceType();
     }
 
     @Override

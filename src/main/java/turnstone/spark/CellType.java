@@ -18,6 +18,7 @@ import org.apache.spark.sql.types.StringType;
 import org.apache.spark.sql.types.TimestampNTZType;
 import org.apache.spark.sql.types.TimestampType;
 import turnstone.fault.Fault;
+import turnstone.measure.SourceType;
 
 /** The types of cells that are read, and how. */
 enum CellType {
@@ -63,7 +64,7 @@ enum CellType {
     /** The type of a channel: a number. */
     static CellType ofChannel(DataType type, String column, String place) {
         CellType cell = of(type, column, place);
-        if (cell.ordinal() < BYTE.ordinal()) {
+        if (cell == TEXT || cell == BOOLEAN || cell == DATE || cell == TIMESTAMP) {
             throw wrong(type, column, place, "float, double, short or int");
         }
         return cell;
@@ -168,6 +169,17 @@ enum CellType {
             case TIMESTAMP -> Math.floorDiv(row.getLong(ordinal), MICROSECONDS);
             case TEXT -> parsed(row.getUTF8String(ordinal).toString());
             default -> RecordCursor.NO_NUMBER;
+        };
+    }
+
+    /** As what its numbers were recorded. */
+    SourceType sourceType() {
+        return switch (this) {
+            case BYTE, SHORT -> SourceType.SHORT;
+            case INT, LONG -> SourceType.INT;
+            case FLOAT -> SourceType.FLOAT;
+            case DOUBLE -> SourceType.DOUBLE;
+            default -> throw new IllegalStateException("not a number: " + this);
         };
     }
 

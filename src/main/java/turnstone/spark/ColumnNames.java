@@ -11,7 +11,8 @@ import java.util.Set;
  *
  * @param keys the name of each key column that the table has
  * @param layout how the channels are laid out
- * @param channels the one array column, or one column per channel in order; empty for {@link Layout#ALL_OTHERS}
+ * @param channels the one array column, or one column per channel in order, or the prefix of numbered ones;
+ *     empty for {@link Layout#ALL_OTHERS}
  * @param channelCount the number of channels of an array column; 0 = as the first record has. For columns their number
  * @param others what becomes of the columns that are neither
  */
@@ -25,6 +26,8 @@ public record ColumnNames(
         ARRAY,
         /** One numeric column per channel, by name. */
         COLUMNS,
+        /** One numeric column per channel: every column whose name is the one given and digits, in the order of the numbers. */
+        NUMBERED,
         /** Every column that is no key is a channel, in the order of the table. */
         ALL_OTHERS
     }
@@ -43,8 +46,8 @@ public record ColumnNames(
         sorted.putAll(keys);
         keys = sorted;
         channels = List.copyOf(channels);
-        if (layout == Layout.ARRAY && channels.size() != 1) {
-            throw new IllegalArgumentException("one array column, not " + channels.size());
+        if ((layout == Layout.ARRAY || layout == Layout.NUMBERED) && channels.size() != 1) {
+            throw new IllegalArgumentException("one array column or prefix, not " + channels.size());
         }
         if (Set.copyOf(channels).size() != channels.size()) {
             throw new IllegalArgumentException("a channel column is named twice");
@@ -59,6 +62,11 @@ public record ColumnNames(
     /** Channels in named columns. */
     public static ColumnNames columns(Map<KeyColumn, String> keys, List<String> channels) {
         return new ColumnNames(keys, Layout.COLUMNS, channels, channels.size(), Others.LEAVE);
+    }
+
+    /** Channels in numbered columns. */
+    public static ColumnNames numbered(Map<KeyColumn, String> keys, String prefix) {
+        return new ColumnNames(keys, Layout.NUMBERED, List.of(prefix), 0, Others.LEAVE);
     }
 
     /** A plain table: every column but the label is a channel. */

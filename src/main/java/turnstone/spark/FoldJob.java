@@ -2,6 +2,7 @@ package turnstone.spark;
 
 import java.util.Iterator;
 import java.util.List;
+import java.util.Map;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import org.apache.spark.HashPartitioner;
@@ -74,7 +75,7 @@ public final class FoldJob {
     }
 
     private static void requireOneIdentity(SortedMap<String, ShowingMerge.Result> showings) {
-        for (SortedMap.Entry<String, ShowingMerge.Result> showing : showings.entrySet()) {
+        for (Map.Entry<String, ShowingMerge.Result> showing : showings.entrySet()) {
             if (!showing.getValue().conflict().isEmpty()) {
                 throw Fault.input("the records of a showing disagree about what it is")
                         .at("showing " + showing.getKey())

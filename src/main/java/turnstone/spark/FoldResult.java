@@ -34,6 +34,13 @@ public final class FoldResult {
         return moments;
     }
 
+    /** Moments by material, or by the label of a plain table. */
+    public SortedMap<String, Moments> byMaterial() {
+        TreeMap<String, Moments> sums = new TreeMap<>();
+        moments.forEach((key, value) -> sums.merge(key.material(), value, Moments::plus));
+        return sums;
+    }
+
     /** The day's showings by id; none for a plain table. */
     public SortedMap<String, ShowingSums> showings() {
         return showings;

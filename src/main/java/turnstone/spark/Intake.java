@@ -1,5 +1,6 @@
 package turnstone.spark;
 
+import java.time.ZoneOffset;
 import java.util.HashMap;
 import java.util.Map;
 import turnstone.measure.Head;
@@ -7,6 +8,7 @@ import turnstone.measure.HeadOutcome;
 import turnstone.measure.HeadTrouble;
 import turnstone.measure.Instrument;
 import turnstone.measure.QuarantineReason;
+import turnstone.measure.ReferenceTable;
 
 /**
  * Takes records one by one: keys, head, counts. Shared by all jobs, so that posting, trial and projection accept alike. For one thread.
@@ -100,7 +102,7 @@ final class Intake {
         if (outcome == HeadOutcome.NO_SIGNAL) {
             return Outcome.NO_SIGNAL;
         }
-        int bad = spec.scale().toCounts(output, 0, counts, 0);
+        int bad = spec.scale() == null ? -1 : spec.scale().toCounts(output, 0, counts, 0);
         if (bad >= 0) {
             spec.scale().explain(bad, output[bad], trouble);
             return refuse(trouble.reason(), trouble.channel(), trouble.message());

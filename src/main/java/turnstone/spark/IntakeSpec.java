@@ -61,7 +61,7 @@ public final class IntakeSpec implements Serializable {
         this.references = references;
         this.scale = scale;
         this.without = new HashSet<>(without);
-        if (head.outputs() != scale.channels()) {
+        if (scale != null && head.outputs() != scale.channels()) {
             throw new IllegalArgumentException(
                     "the head gives " + head.outputs() + " channels, the count scale has " + scale.channels());
         }
@@ -73,6 +73,7 @@ public final class IntakeSpec implements Serializable {
      * @param materials the names known
      * @param instruments by sorter, those of that day
      * @param references null where the head needs none
+     * @param scale null where one is yet to be proposed: nothing can be folded then
      */
     public static IntakeSpec day(
             LocalDate day,

@@ -17,7 +17,9 @@ public enum KeyColumn {
     /** Position across the belt, where references are used. */
     BELT_COLUMN("belt column"),
     /** Milliseconds since 1970-01-01T00:00Z, where references are used. */
-    TIME("time");
+    TIME("time"),
+    /** Dark or white, in a table of references. */
+    KIND("kind");
 
     private final String label;
 

@@ -7,6 +7,7 @@ import java.util.List;
 import java.util.Map;
 import org.apache.hadoop.conf.Configuration;
 import turnstone.measure.QuarantineReason;
+import turnstone.measure.SourceType;
 
 /** Records of CSV splits, parsed by this program: no type inference, no field lost or invented. */
 final class LineCursor implements RecordCursor {
@@ -150,6 +151,11 @@ final class LineCursor implements RecordCursor {
         return layout.layout() == ColumnNames.Layout.ARRAY
                 ? elements[channel]
                 : fields.get(layout.channelAt()[channel]);
+    }
+
+    @Override
+    public SourceType type(int channel) {
+        return SourceType.DECIMAL;
     }
 
     @Override

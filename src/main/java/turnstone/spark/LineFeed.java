@@ -7,6 +7,7 @@ import org.apache.spark.api.java.JavaRDD;
 import org.apache.spark.api.java.JavaSparkContext;
 import org.apache.spark.broadcast.Broadcast;
 import org.apache.spark.util.SerializableConfiguration;
+import turnstone.measure.SourceType;
 
 /** Records from the lines of CSV files. */
 final class LineFeed implements Feed {
@@ -29,6 +30,11 @@ final class LineFeed implements Feed {
         return context.parallelize(splits, Math.max(1, splits.size()))
                 .mapPartitions((Iterator<CsvSplit> part) ->
                         task.run(new LineCursor(part, columns, settings.value().value())));
+    }
+
+    @Override
+    public SourceType sourceType() {
+        return SourceType.DECIMAL;
     }
 
     @Override

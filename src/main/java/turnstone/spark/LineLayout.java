@@ -3,8 +3,37 @@ package turnstone.spark;
 import java.io.Serializable;
 import java.util.List;
 
-/** Where texts and channels are among the fields of a line. Internal: the arrays are shared and not to be changed. */
-record LineLayout(int columns, int[] textAt, ColumnNames.Layout layout, int[] channelAt) implements Serializable {
+/** Where texts and channels are among the fields of a line. The arrays are shared within this package and never written to. */
+final class LineLayout implements Serializable {
+    private static final long serialVersionUID = 1L;
+
+    private final int columns;
+    private final int[] textAt;
+    private final ColumnNames.Layout layout;
+    private final int[] channelAt;
+
+    private LineLayout(int columns, int[] textAt, ColumnNames.Layout layout, int[] channelAt) {
+        this.columns = columns;
+        this.textAt = textAt;
+        this.layout = layout;
+        this.channelAt = channelAt;
+    }
+
+    int columns() {
+        return columns;
+    }
+
+    int[] textAt() {
+        return textAt;
+    }
+
+    ColumnNames.Layout layout() {
+        return layout;
+    }
+
+    int[] channelAt() {
+        return channelAt;
+    }
 
     static LineLayout of(TableColumns columns, List<String> header) {
         int[] textAt = columns.texts().stream().mapToInt(header::indexOf).toArray();

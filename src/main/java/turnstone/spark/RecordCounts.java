@@ -7,6 +7,7 @@ import java.io.Serializable;
 import java.util.ArrayList;
 import java.util.Collections;
 import java.util.List;
+import java.util.Map;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import java.util.TreeSet;
@@ -119,7 +120,7 @@ public final class RecordCounts implements Serializable {
             out.writeLong(number);
         }
         out.writeInt(quarantined.size());
-        for (SortedMap.Entry<String, Long> reason : quarantined.entrySet()) {
+        for (Map.Entry<String, Long> reason : quarantined.entrySet()) {
             Payloads.writeText(out, reason.getKey());
             out.writeLong(reason.getValue());
         }

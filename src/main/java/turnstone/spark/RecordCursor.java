@@ -1,6 +1,7 @@
 package turnstone.spark;
 
 import turnstone.measure.QuarantineReason;
+import turnstone.measure.SourceType;
 
 /**
  * Walks the records of one partition. Everything it returns is good until the next call of {@link #next()}; for one thread.
@@ -23,6 +24,9 @@ interface RecordCursor {
 
     /** The decimal as written, where the source is text; else null. */
     String channelText(int channel);
+
+    /** The type in which a channel was recorded. */
+    SourceType type(int channel);
 
     /** What is wrong with the record as read; null where nothing is. */
     QuarantineReason defect();

@@ -7,6 +7,7 @@ import org.apache.spark.sql.Dataset;
 import org.apache.spark.sql.Row;
 import org.apache.spark.sql.execution.FileSourceScanExec;
 import turnstone.fault.Fault;
+import turnstone.measure.SourceType;
 
 /**
  * A table of records, ready to be walked partition by partition, with its files counted apart from the job.
@@ -103,6 +104,11 @@ public final class RecordSource {
     /** By which way the records come in. */
     public ReadPath readPath() {
         return feed.path();
+    }
+
+    /** The type in which values were recorded; of columns of several types the one with the least distance between values. */
+    SourceType sourceType() {
+        return feed.sourceType();
     }
 
     /** The same table, walked in another way. */

@@ -6,6 +6,7 @@ import org.apache.spark.sql.catalyst.InternalRow;
 import org.apache.spark.sql.catalyst.util.ArrayData;
 import org.apache.spark.unsafe.types.UTF8String;
 import turnstone.measure.QuarantineReason;
+import turnstone.measure.SourceType;
 
 /** Records from the engine's rows, those of a column batch included. Rows are reused by the engine, so values are copied out. */
 final class RowCursor implements RecordCursor {
@@ -122,6 +123,11 @@ final class RowCursor implements RecordCursor {
     @Override
     public String channelText(int channel) {
         return null;
+    }
+
+    @Override
+    public SourceType type(int channel) {
+        return layout.channelTypes()[layout.layout() == ColumnNames.Layout.ARRAY ? 0 : channel].sourceType();
     }
 
     @Override

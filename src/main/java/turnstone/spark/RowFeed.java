@@ -5,6 +5,7 @@ import org.apache.spark.api.java.JavaRDD;
 import org.apache.spark.sql.Dataset;
 import org.apache.spark.sql.Row;
 import org.apache.spark.sql.catalyst.InternalRow;
+import turnstone.measure.SourceType;
 
 /** Records from the rows of any frame. */
 final class RowFeed implements Feed {
@@ -23,6 +24,11 @@ final class RowFeed implements Feed {
                 .toRdd()
                 .toJavaRDD()
                 .mapPartitions((Iterator<InternalRow> rows) -> task.run(new RowCursor(rows, columns)));
+    }
+
+    @Override
+    public SourceType sourceType() {
+        return layout.sourceType();
     }
 
     @Override

@@ -2,6 +2,7 @@ package turnstone.spark;
 
 import java.io.Serializable;
 import java.util.ArrayList;
+import java.util.Comparator;
 import java.util.EnumMap;
 import java.util.HashSet;
 import java.util.List;
@@ -30,10 +31,7 @@ record TableColumns(
             keyIndex.put(key.getKey(), texts.size());
             texts.add(key.getValue());
         }
-        List<String> channels = new ArrayList<>(names.channels());
-        if (names.layout() == ColumnNames.Layout.ALL_OTHERS) {
-            available.stream().filter(column -> !texts.contains(column)).forEach(channels::add);
-        }
+        List<String> channels = channels(names, available, texts);
         for (String channel : channels) {
             require(present, channel, "channel", available, place);
         }
@@ -48,6 +46,23 @@ record TableColumns(
         ColumnNames.Layout layout =
                 names.layout() == ColumnNames.Layout.ARRAY ? ColumnNames.Layout.ARRAY : ColumnNames.Layout.COLUMNS;
         return new TableColumns(List.copyOf(texts), keyIndex, layout, List.copyOf(channels));
+    }
+
+    private static List<String> channels(ColumnNames names, List<String> available, List<String> texts) {
+        return switch (names.layout()) {
+            case ARRAY, COLUMNS -> names.channels();
+            case ALL_OTHERS ->
+                available.stream().filter(column -> !texts.contains(column)).toList();
+            case NUMBERED -> numbered(names.channels().get(0), available);
+        };
+    }
+
+    private static List<String> numbered(String prefix, List<String> available) {
+        return available.stream()
+                .filter(column -> column.startsWith(prefix)
+                        && column.substring(prefix.length()).matches("[0-9]{1,9}"))
+                .sorted(Comparator.comparingInt(column -> Integer.parseInt(column.substring(prefix.length()))))
+                .toList();
     }
 
     private static void require(

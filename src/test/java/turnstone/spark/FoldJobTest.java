@@ -7,6 +7,7 @@ import java.math.BigInteger;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Map;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import org.apache.spark.TaskContext;
@@ -56,10 +57,11 @@ class FoldJobTest {
                 InventedDay.asArray(),
                 FoldSettings.usual());
         assertThat(result.moments()).hasSize(36);
-        for (SortedMap.Entry<LedgerKey, Moments> entry : result.moments().entrySet()) {
+        for (Map.Entry<LedgerKey, Moments> entry : result.moments().entrySet()) {
             LedgerKey key = entry.getKey();
             List<long[]> counts = records.stream()
-                    .filter(r -> key.instrument().startsWith(r.sorter()) && key.material().equals(r.material()))
+                    .filter(r -> key.instrument().startsWith(r.sorter())
+                            && key.material().equals(r.material()))
                     .filter(r -> r.tray().endsWith(Integer.toString(key.trayGroup())))
                     .map(r -> java.util.Arrays.stream(r.channels())
                             .mapToLong(x -> Math.round(x * 1000))
@@ -82,7 +84,8 @@ class FoldJobTest {
         BigInteger ofMoments =
                 result.moments().values().stream().map(m -> m.sum(3)).reduce(BigInteger.ZERO, BigInteger::add);
         assertThat(ofShowings).isEqualTo(ofMoments);
-        assertThat(result.showings().values().stream().mapToLong(ShowingSums::records)).containsOnly(9L);
+        assertThat(result.showings().values().stream().mapToLong(ShowingSums::records))
+                .containsOnly(9L);
     }
 
     @Test
@@ -113,8 +116,8 @@ class FoldJobTest {
     @Test
     void buffersOfATaskStayUnderTheBound(Session session) {
         List<InventedDay.Invented> records = InventedDay.shuffled(InventedDay.records(40, SEED), SEED);
-        Dataset<Row> frame = InventedDay.arrayFrame(session, records, DataTypes.DoubleType)
-                .coalesce(1);
+        Dataset<Row> frame =
+                InventedDay.arrayFrame(session, records, DataTypes.DoubleType).coalesce(1);
         FoldResult expected = fold(session, frame, InventedDay.asArray(), FoldSettings.usual());
         FoldSettings tight = new FoldSettings(20_000, 16, KernelChoice.AUTO, 3, 10);
         FoldResult found = fold(session, frame, InventedDay.asArray(), tight);
@@ -148,6 +151,11 @@ class FoldJobTest {
                     }
                     return task.run(cursor);
                 });
+            }
+
+            @Override
+            public turnstone.measure.SourceType sourceType() {
+                return sound.sourceType();
             }
 
             @Override
@@ -219,7 +227,8 @@ class FoldJobTest {
     @Test
     void aShowingLeftOutIsCountedApart(Session session) {
         List<InventedDay.Invented> records = InventedDay.records(5, SEED);
-        IntakeSpec spec = InventedDay.intake(Precision.COARSE).without(java.util.Set.of(records.get(0).showing()));
+        IntakeSpec spec = InventedDay.intake(Precision.COARSE)
+                .without(java.util.Set.of(records.get(0).showing()));
         FoldResult result = FoldJob.run(
                 RecordSource.ofFrame(
                         session,
@@ -230,13 +239,14 @@ class FoldJobTest {
                 FoldSettings.usual());
         assertThat(result.counts().leftOut()).isEqualTo(5);
         assertThat(result.counts().accepted()).isEqualTo(175);
-        assertThat(result.showings()).hasSize(35).doesNotContainKey(records.get(0).showing());
+        assertThat(result.showings())
+                .hasSize(35)
+                .doesNotContainKey(records.get(0).showing());
     }
 
     @Test
     void aDifferenceToTheIndependentCountIsRefused(Session session) {
-        Dataset<Row> frame =
-                InventedDay.arrayFrame(session, InventedDay.records(2, SEED), DataTypes.DoubleType);
+        Dataset<Row> frame = InventedDay.arrayFrame(session, InventedDay.records(2, SEED), DataTypes.DoubleType);
         RecordSource source = RecordSource.ofFrame(session, frame, InventedDay.asArray(), 73);
         assertThatThrownBy(() -> FoldJob.run(source, InventedDay.intake(Precision.COARSE), FoldSettings.usual()))
                 .isInstanceOf(Fault.class)

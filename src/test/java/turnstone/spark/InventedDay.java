@@ -61,8 +61,8 @@ final class InventedDay {
                         for (int c = 0; c < CHANNELS; c++) {
                             channels[c] = random.nextInt(-90_000, 90_000) / 1000.0;
                         }
-                        records.add(new Invented(
-                                DAY.toString(), sorter, sorter + "/" + name, name, material, channels));
+                        records.add(
+                                new Invented(DAY.toString(), sorter, sorter + "/" + name, name, material, channels));
                     }
                 }
             }
