@@ -1,6 +1,5 @@
 package turnstone.spark;
 
-import java.time.ZoneOffset;
 import java.util.HashMap;
 import java.util.Map;
 import turnstone.measure.Head;
@@ -8,7 +7,6 @@ import turnstone.measure.HeadOutcome;
 import turnstone.measure.HeadTrouble;
 import turnstone.measure.Instrument;
 import turnstone.measure.QuarantineReason;
-import turnstone.measure.ReferenceTable;
 
 /**
  * Takes records one by one: keys, head, counts. Shared by all jobs, so that posting, trial and projection accept alike. For one thread.

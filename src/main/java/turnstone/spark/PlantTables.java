@@ -122,18 +122,20 @@ public final class PlantTables {
         keys.put(KeyColumn.SORTER, spec.columns().sorter());
         keys.put(KeyColumn.BELT_COLUMN, spec.columns().beltColumn());
         keys.put(KeyColumn.TIME, spec.columns().time_ms());
-        TableSpec table = table(
-                spec.source(), spec.source().path(), columns(spec.source().layout(), keys, plant.channels()));
+        TableSpec table =
+                table(spec.source(), spec.source().path(), columns(spec.source().layout(), keys, plant.channels()));
         RecordSource source = RecordSource.open(session, table);
         TableColumns columns = source.columns();
-        List<Reference> read = SparkTrouble.guard("reading references", () -> source.over(cursor -> {
-                    List<Reference> found = new ArrayList<>();
-                    while (cursor.next()) {
-                        found.add(new Reference(cursor, columns));
-                    }
-                    return (Iterator<Reference>) found.iterator();
-                })
-                .collect());
+        List<Reference> read = SparkTrouble.guard(
+                "reading references",
+                () -> source.over(cursor -> {
+                            List<Reference> found = new ArrayList<>();
+                            while (cursor.next()) {
+                                found.add(new Reference(cursor, columns));
+                            }
+                            return (Iterator<Reference>) found.iterator();
+                        })
+                        .collect());
         source.requireAll(read.size());
         ReferenceTable.Builder builder = ReferenceTable.builder();
         for (Reference reference : read) {
@@ -146,7 +148,8 @@ public final class PlantTables {
         if (reference.sorter == null
                 || reference.beltColumn != (int) reference.beltColumn
                 || reference.time_ms == RecordCursor.NO_NUMBER) {
-            throw Fault.input("a reference lacks its sorter, belt column or time").at(reference.origin);
+            throw Fault.input("a reference lacks its sorter, belt column or time")
+                    .at(reference.origin);
         }
         ReferenceKind kind;
         if (spec.dark().equals(reference.kind)) {

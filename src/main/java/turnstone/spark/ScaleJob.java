@@ -57,10 +57,11 @@ public final class ScaleJob {
     private static Seen walk(RecordSource source, IntakeSpec spec, SourceType type) {
         Broadcast<IntakeSpec> shared = source.session().context().broadcast(spec);
         TableColumns columns = source.columns();
-        List<Seen> parts = SparkTrouble.guard("looking at values", () -> source.over(cursor ->
-                        (Iterator<Seen>) List.of(look(cursor, columns, shared.value(), type))
+        List<Seen> parts = SparkTrouble.guard(
+                "looking at values",
+                () -> source.over(cursor -> (Iterator<Seen>) List.of(look(cursor, columns, shared.value(), type))
                                 .iterator())
-                .collect());
+                        .collect());
         Seen total = empty(spec, type);
         for (Seen part : parts) {
             total.proposal().merge(part.proposal());

@@ -36,17 +36,19 @@ public final class SourceDays {
         }
         RecordSource source = RecordSource.open(session, PlantTables.records(plant, LocalDate.EPOCH));
         int at = source.columns().index(KeyColumn.DAY);
-        List<String> found = SparkTrouble.guard("looking for days", () -> source.over(cursor -> {
-                    Set<String> days = new TreeSet<>();
-                    while (cursor.next()) {
-                        String day = cursor.text(at);
-                        if (day != null) {
-                            days.add(day);
-                        }
-                    }
-                    return (Iterator<String>) days.iterator();
-                })
-                .collect());
+        List<String> found = SparkTrouble.guard(
+                "looking for days",
+                () -> source.over(cursor -> {
+                            Set<String> days = new TreeSet<>();
+                            while (cursor.next()) {
+                                String day = cursor.text(at);
+                                if (day != null) {
+                                    days.add(day);
+                                }
+                            }
+                            return (Iterator<String>) days.iterator();
+                        })
+                        .collect());
         return dates(found);
     }
 
