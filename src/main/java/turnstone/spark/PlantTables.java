@@ -5,7 +5,6 @@ import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.EnumMap;
 import java.util.HashMap;
-import java.util.Iterator;
 import java.util.List;
 import java.util.Map;
 import java.util.Set;
@@ -133,7 +132,7 @@ public final class PlantTables {
                             while (cursor.next()) {
                                 found.add(new Reference(cursor, columns));
                             }
-                            return (Iterator<Reference>) found.iterator();
+                            return found.iterator();
                         })
                         .collect());
         source.requireAll(read.size());

@@ -1,6 +1,5 @@
 package turnstone.spark;
 
-import java.util.Iterator;
 import java.util.List;
 import org.apache.spark.api.java.JavaRDD;
 import org.apache.spark.broadcast.Broadcast;
@@ -84,7 +83,7 @@ public final class ProjectJob {
                             Intake intake = new Intake(spec.value(), columns, cursor);
                             Tallied tallied =
                                     count(cursor, intake, projector.value().copy(), quarantineKept);
-                            return (Iterator<Tallied>) List.of(tallied).iterator();
+                            return List.of(tallied).iterator();
                         })
                         .collect());
         Tallied total = new Tallied(new RecordCounts(quarantineKept), new ProjectTally());

@@ -1,7 +1,6 @@
 package turnstone.spark;
 
 import java.io.Serializable;
-import java.util.Iterator;
 import java.util.List;
 import org.apache.spark.broadcast.Broadcast;
 import turnstone.fault.Fault;
@@ -59,7 +58,7 @@ public final class ScaleJob {
         TableColumns columns = source.columns();
         List<Seen> parts = SparkTrouble.guard(
                 "looking at values",
-                () -> source.over(cursor -> (Iterator<Seen>) List.of(look(cursor, columns, shared.value(), type))
+                () -> source.over(cursor -> List.of(look(cursor, columns, shared.value(), type))
                                 .iterator())
                         .collect());
         Seen total = empty(spec, type);

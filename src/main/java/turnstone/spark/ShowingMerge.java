@@ -27,14 +27,29 @@ final class ShowingMerge {
     }
 
     /** What one task knows of a showing; sums empty where it accepted none. */
-    private record Part(
-            List<String> identity,
-            String instrument,
-            int trayGroup,
-            long records,
-            long noSignal,
-            long quarantined,
-            long[] sums) {}
+    private static final class Part {
+        final List<String> identity;
+        final String instrument;
+        final int trayGroup;
+        final long records;
+        final long noSignal;
+        final long quarantined;
+        final long[] sums;
+
+        Part(DataInputStream in) throws IOException {
+            identity =
+                    List.of(Payloads.readText(in), Payloads.readText(in), Payloads.readText(in), Payloads.readText(in));
+            instrument = Payloads.readText(in);
+            trayGroup = in.readInt();
+            records = in.readLong();
+            noSignal = in.readLong();
+            quarantined = in.readLong();
+            sums = new long[in.readInt()];
+            for (int c = 0; c < sums.length; c++) {
+                sums[c] = in.readLong();
+            }
+        }
+    }
 
     static byte[] payload(Slot slot, long records, long noSignal, long quarantined, long[] sums) {
         RecordKeys keys = slot.keys;
@@ -54,23 +69,8 @@ final class ShowingMerge {
         });
     }
 
-    private static Part read(DataInputStream in) throws IOException {
-        List<String> identity =
-                List.of(Payloads.readText(in), Payloads.readText(in), Payloads.readText(in), Payloads.readText(in));
-        String instrument = Payloads.readText(in);
-        int trayGroup = in.readInt();
-        long records = in.readLong();
-        long noSignal = in.readLong();
-        long quarantined = in.readLong();
-        long[] sums = new long[in.readInt()];
-        for (int c = 0; c < sums.length; c++) {
-            sums[c] = in.readLong();
-        }
-        return new Part(identity, instrument, trayGroup, records, noSignal, quarantined, sums);
-    }
-
     void add(byte[] payload) {
-        Part part = Payloads.read(payload, ShowingMerge::read);
+        Part part = Payloads.read(payload, Part::new);
         if (first == null) {
             first = part;
         } else {

@@ -4,8 +4,8 @@ import java.io.IOException;
 import java.time.LocalDate;
 import java.time.format.DateTimeParseException;
 import java.util.ArrayList;
-import java.util.Iterator;
 import java.util.List;
+import java.util.Optional;
 import java.util.Set;
 import java.util.TreeSet;
 import java.util.regex.Matcher;
@@ -46,7 +46,7 @@ public final class SourceDays {
                                     days.add(day);
                                 }
                             }
-                            return (Iterator<String>) days.iterator();
+                            return days.iterator();
                         })
                         .collect());
         return dates(found);
@@ -56,13 +56,17 @@ public final class SourceDays {
     private static List<LocalDate> dates(Iterable<String> texts) {
         TreeSet<LocalDate> days = new TreeSet<>();
         for (String text : texts) {
-            try {
-                days.add(LocalDate.parse(text));
-            } catch (DateTimeParseException notADay) {
-                continue;
-            }
+            date(text).ifPresent(days::add);
         }
         return List.copyOf(days);
+    }
+
+    private static Optional<LocalDate> date(String text) {
+        try {
+            return Optional.of(LocalDate.parse(text));
+        } catch (DateTimeParseException notADay) {
+            return Optional.empty();
+        }
     }
 
     /** Looks only at the part of the path that has the day in it; what lies below is read when the day is. */
@@ -100,7 +104,8 @@ public final class SourceDays {
     }
 
     private static void literal(StringBuilder expression, String text) {
-        for (char c : text.toCharArray()) {
+        for (int i = 0; i < text.length(); i++) {
+            char c = text.charAt(i);
             expression.append(c == '*' ? ".*" : c == '?' ? "." : Pattern.quote(String.valueOf(c)));
         }
     }

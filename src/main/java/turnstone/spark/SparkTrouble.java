@@ -12,11 +12,11 @@ final class SparkTrouble {
 
     private SparkTrouble() {}
 
-    /** Runs a step of a job; what it throws comes out as a {@link Fault}. */
+    /** Runs a step of a job; what it throws comes out as a {@link Fault}. The engine throws checked exceptions without declaring them. */
     static <T> T guard(String doing, Supplier<T> step) {
         try {
             return step.get();
-        } catch (RuntimeException e) {
+        } catch (Exception e) {
             throw fault(doing, e);
         }
     }
@@ -41,8 +41,8 @@ final class SparkTrouble {
                     path,
                     failure);
         }
-        if (failure == innermost && isDefect(failure)) {
-            return (RuntimeException) failure;
+        if (failure == innermost && failure instanceof RuntimeException defect && isDefect(defect)) {
+            return defect;
         }
         String what = innermost instanceof FileNotFoundException ? "a file is gone" : "failed";
         return place(Fault.storage(what + " while " + doing).found(reason(innermost)), path, failure);

@@ -1,7 +1,6 @@
 package turnstone.spark;
 
 import java.util.ArrayList;
-import java.util.Iterator;
 import java.util.List;
 import org.apache.spark.broadcast.Broadcast;
 import turnstone.decide.Judgement;
@@ -28,7 +27,7 @@ public final class TrialJob {
                             Intake intake = new Intake(sharedSpec.value(), columns, cursor);
                             TrialTallies tallies =
                                     judge(cursor, intake, sharedModels.value().copy(), quarantineKept);
-                            return (Iterator<TrialTallies>) List.of(tallies).iterator();
+                            return List.of(tallies).iterator();
                         })
                         .collect());
         TrialTallies total = new TrialTallies(quarantineKept);

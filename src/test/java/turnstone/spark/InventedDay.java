@@ -39,11 +39,28 @@ final class InventedDay {
     static final List<String> KEYS = List.of("day", "sorter", "showing", "tray", "material");
 
     /** One record: its keys and its channels, which are thousandths. */
-    record Invented(String day, String sorter, String showing, String tray, String material, double[] channels) {
+    record Invented(String day, String sorter, String showing, String tray, String material, Channels values) {
+        Invented(String day, String sorter, String showing, String tray, String material, double[] channels) {
+            this(day, sorter, showing, tray, material, new Channels(channels));
+        }
+
+        double[] channels() {
+            return values.values.clone();
+        }
+
         List<String> keys() {
             List<String> keys = new ArrayList<>();
             Collections.addAll(keys, day, sorter, showing, tray, material);
             return keys;
+        }
+    }
+
+    /** Numbers that nobody changes. */
+    static final class Channels {
+        private final double[] values;
+
+        Channels(double[] values) {
+            this.values = values.clone();
         }
     }
 

@@ -68,9 +68,7 @@ class RecordSourceTest {
         assertThat(expected.readPath()).isEqualTo(ReadPath.LINES);
         assertThat(fingerprints(fold(csv(session, packed)))).isEqualTo(fingerprints(expected));
         RecordSource cut = RecordSourceOpening.open(
-                session,
-                new TableSpec(List.of(plain.toString()), TableSpec.Form.CSV, InventedDay.asColumns()),
-                1000);
+                session, new TableSpec(List.of(plain.toString()), TableSpec.Form.CSV, InventedDay.asColumns()), 1000);
         FoldResult inPieces = fold(cut);
         assertThat(inPieces.partitions()).isGreaterThan(20);
         assertThat(fingerprints(inPieces)).isEqualTo(fingerprints(expected));
@@ -88,7 +86,10 @@ class RecordSourceTest {
     void nothingAboveTheScanIsSkipped(Session session) {
         List<InventedDay.Invented> records = InventedDay.records(4, SEED);
         Path file = folder.resolve("frame");
-        InventedDay.arrayFrame(session, records, DataTypes.FloatType).coalesce(1).write().parquet(file.toString());
+        InventedDay.arrayFrame(session, records, DataTypes.FloatType)
+                .coalesce(1)
+                .write()
+                .parquet(file.toString());
         Dataset<Row> bare = session.spark().read().parquet(file.toString());
         FoldResult all = fold(RecordSource.ofFrame(session, bare, InventedDay.asArray(), 144));
         assertThat(all.readPath()).isEqualTo(ReadPath.COLUMN_BATCHES);
@@ -110,11 +111,12 @@ class RecordSourceTest {
         assertThat(fingerprints(fold(RecordSource.ofFrame(session, reordered, InventedDay.asArray(), 144))))
                 .isEqualTo(fingerprints(all));
 
-        Dataset<Row> cached = bare.cache();
+        bare.cache();
+        Dataset<Row> cached = session.spark().read().parquet(file.toString());
         FoldResult fromCache = fold(RecordSource.ofFrame(session, cached, InventedDay.asArray(), 144));
         assertThat(fromCache.readPath()).isEqualTo(ReadPath.ROWS);
         assertThat(fingerprints(fromCache)).isEqualTo(fingerprints(all));
-        cached.unpersist();
+        bare.unpersist();
     }
 
     @Test
@@ -132,8 +134,8 @@ class RecordSourceTest {
                 .parquet(file.toString());
         Path text = folder.resolve("one.csv");
         InventedDay.write(text, InventedDay.csv(records));
-        for (FoldResult found : List.of(
-                fold(parquet(session, file, InventedDay.asArray())), fold(csv(session, text)))) {
+        for (FoldResult found :
+                List.of(fold(parquet(session, file, InventedDay.asArray())), fold(csv(session, text)))) {
             assertThat(found.counts().quarantine()).singleElement().satisfies(record -> {
                 assertThat(record.row()).isEqualTo(101);
                 assertThat(record.file()).contains("one");
