@@ -52,12 +52,12 @@ class BoundsTest {
         assertThat(Bounds.high(Bounds.FINE_LIMIT + 1)).as("one count more").isEqualTo(Bounds.LOW_LIMIT);
     }
 
-    /** Real records, a little more than a panel holds, at the edges of fine counts: the low half of the last channel is -2^21. */
+    /** Real records, more than 64 bits could hold without emptying the panel (2^21 * 2^42 = 2^63), at the edges of fine counts: the low half of the last channel is -2^21. */
     @Test
     void sumsStayExactWhereThePanelIsEmptied() {
         double[] record = {Bounds.FINE_LIMIT, -Bounds.FINE_LIMIT, ((Bounds.LOW_LIMIT - 1) << 22) - Bounds.LOW_LIMIT};
         RowFolder folder = new RowFolder(3, CountSample.marks(3, true), BlockKernels.choose(KernelChoice.AUTO), 2048);
-        long records = Bounds.PANEL_RECORDS + 5000;
+        long records = 2 * Bounds.PANEL_RECORDS + 5000;
         for (long k = 0; k < records; k++) {
             folder.add(record, 0);
         }
