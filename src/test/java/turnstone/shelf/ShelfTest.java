@@ -2,88 +2,25 @@ package turnstone.shelf;
 
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.assertThatThrownBy;
+import static turnstone.shelf.Shelves.NIGHT;
+import static turnstone.shelf.Shelves.READER;
+import static turnstone.shelf.Shelves.assertRefused;
+import static turnstone.shelf.Shelves.model;
 
 import com.fasterxml.jackson.databind.JsonNode;
-import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.nio.charset.StandardCharsets;
-import java.nio.file.Path;
-import java.time.Clock;
-import java.time.Instant;
-import java.time.ZoneId;
-import java.time.ZoneOffset;
 import java.util.ArrayList;
 import java.util.List;
 import java.util.Optional;
-import java.util.concurrent.Callable;
-import java.util.concurrent.CyclicBarrier;
-import java.util.concurrent.ExecutorService;
-import java.util.concurrent.Executors;
-import java.util.concurrent.Future;
 import org.junit.jupiter.api.Test;
-import org.junit.jupiter.api.io.TempDir;
 import turnstone.fault.Fault;
 import turnstone.json.Json;
-import turnstone.store.LocalStore;
-import turnstone.store.MemoryStore;
-import turnstone.store.Outcome;
 import turnstone.store.Problem;
 
 class ShelfTest {
-    private static final int ROUNDS = 50;
-    private static final Instant NIGHT = Instant.parse("2026-03-02T23:00:00Z");
 
-    /** Models for these tests carry a fingerprint over all but it. */
-    private static final ModelReader READER = (model, place) -> {
-        String stated = model.path("fingerprint").asText();
-        ObjectNode rest = model.<ObjectNode>deepCopy();
-        rest.remove("fingerprint");
-        if (!Json.fingerprint(rest).equals(stated)) {
-            throw Fault.storage("not what its fingerprint says").at(place);
-        }
-        return stated;
-    };
-
-    private static final class Hands extends Clock {
-        private Instant now = NIGHT;
-
-        @Override
-        public Instant instant() {
-            return now;
-        }
-
-        @Override
-        public ZoneId getZone() {
-            return ZoneOffset.UTC;
-        }
-
-        @Override
-        public Clock withZone(ZoneId zone) {
-            return this;
-        }
-    }
-
-    /** Somebody else does something in the instant before a change is published. */
-    private static final class InterruptedStore extends MemoryStore {
-        private Runnable before = () -> {};
-        private int fired;
-
-        @Override
-        public Outcome publish(String name, byte[] content) {
-            if (name.startsWith("journal/")) {
-                Runnable now = before;
-                before = () -> {};
-                fired++;
-                now.run();
-            }
-            return super.publish(name, content);
-        }
-    }
-
-    @TempDir
-    Path folder;
-
-    private final InterruptedStore store = new InterruptedStore();
-    private final Hands clock = new Hands();
+    private final Shelves.InterruptedStore store = new Shelves.InterruptedStore();
+    private final Shelves.Hands clock = new Shelves.Hands();
     private final Shelf shelf = Shelf.open(store, clock, READER);
 
     @Test
@@ -218,55 +155,6 @@ class ShelfTest {
     }
 
     @Test
-    void whoLosesTheRaceIsBusyAndChangesNothing() {
-        String a = shelf.put(model(1));
-        String b = shelf.put(model(2));
-        store.before = () -> shelf.release(b, Optional.empty(), "mine", "winner");
-        assertRefused(Fault.Kind.BUSY, () -> shelf.release(a, Optional.empty(), "mine", "loser"), "by winner");
-        assertThat(store.fired).isEqualTo(2);
-        shelf.release(a, Optional.empty(), "now", "x");
-        store.before = () -> shelf.revert("mine", "winner");
-        assertRefused(Fault.Kind.BUSY, () -> shelf.revert("mine", "loser"), "by winner");
-        assertThat(shelf.history()).hasSize(3);
-    }
-
-    @Test
-    void aDecisionThatRestsOnAnOlderStateIsBusy() {
-        String a = shelf.put(model(1));
-        String b = shelf.put(model(2));
-        shelf.releaseAfter(0, a, Optional.empty(), "first", "x");
-        assertRefused(Fault.Kind.BUSY, () -> shelf.releaseAfter(0, b, Optional.empty(), "late", "y"), "entry 1");
-        assertThat(shelf.releaseAfter(1, b, Optional.empty(), "in time", "y").number())
-                .isEqualTo(2);
-    }
-
-    @Test
-    void ofTwoReleasesAtOnceExactlyOneWins() throws Exception {
-        Shelf one = Shelf.open(new LocalStore(folder), clock, READER);
-        Shelf two = Shelf.open(new LocalStore(folder), clock, READER);
-        String a = one.put(model(1));
-        String b = one.put(model(2));
-        String c = one.put(model(3));
-        CyclicBarrier start = new CyclicBarrier(2);
-        ExecutorService racers = Executors.newFixedThreadPool(2);
-        try {
-            for (int round = 0; round < ROUNDS; round++) {
-                one.release(c, Optional.empty(), "base", "x");
-                long last = one.inService().orElseThrow().number();
-                List<Future<String>> results =
-                        racers.invokeAll(List.of(racer(one, start, a, last), racer(two, start, b, last)));
-                String first = results.get(0).get();
-                String second = results.get(1).get();
-                assertThat(List.of(first, second)).as("round " + round).containsExactlyInAnyOrder("won", "BUSY");
-                assertThat(two.inService().orElseThrow().to()).isEqualTo(first.equals("won") ? a : b);
-            }
-        } finally {
-            racers.shutdownNow();
-        }
-        assertThat(two.verify()).isEmpty();
-    }
-
-    @Test
     void verifyNamesEachFileThatIsNotWhatWasWritten() {
         String a = shelf.put(model(1));
         String b = shelf.put(model(2));
@@ -310,36 +198,10 @@ class ShelfTest {
         assertThat(shelf.model(fingerprint)).contains(model);
     }
 
-    private static Callable<String> racer(Shelf shelf, CyclicBarrier start, String model, long last) {
-        return () -> {
-            start.await();
-            try {
-                shelf.releaseAfter(last, model, Optional.empty(), "race", "x");
-                return "won";
-            } catch (Fault fault) {
-                return fault.kind().name();
-            }
-        };
-    }
-
-    private static void assertRefused(
-            Fault.Kind kind, org.assertj.core.api.ThrowableAssert.ThrowingCallable change, String words) {
-        assertThatThrownBy(change)
-                .isInstanceOfSatisfying(
-                        Fault.class, fault -> assertThat(fault.kind()).isEqualTo(kind))
-                .hasMessageContaining(words);
-    }
-
     private void assertOnly(String name, Problem.Trouble trouble) {
         assertThat(shelf.verify()).as(name).singleElement().satisfies(problem -> {
             assertThat(problem.file()).isEqualTo(name);
             assertThat(problem.trouble()).isEqualTo(trouble);
         });
-    }
-
-    private static ObjectNode model(int seed) {
-        ObjectNode model = Json.object().put("format", "test").put("seed", seed);
-        String fingerprint = Json.fingerprint(model);
-        return model.put("fingerprint", fingerprint);
     }
 }
