@@ -59,16 +59,17 @@ class ArchitectureTest {
                     Set.of(
                             "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
                             "trial", "sample")),
+            Map.entry("table", Set.of("measure", "moments", "fisher", "decide", "spark")),
             Map.entry(
                     "night",
                     Set.of(
                             "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
-                            "trial", "sample", "spark")),
+                            "trial", "sample", "spark", "table")),
             Map.entry(
                     "cli",
                     Set.of(
                             "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
-                            "trial", "sample", "spark", "night")));
+                            "trial", "sample", "spark", "table", "night")));
 
     private static final Set<String> ON_THE_ENGINE = Set.of("spark", "night", "cli");
 

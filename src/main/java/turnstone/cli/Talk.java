@@ -3,6 +3,7 @@ package turnstone.cli;
 import java.io.PrintStream;
 import java.util.Locale;
 import turnstone.night.Progress;
+import turnstone.night.Words;
 
 /**
  * Progress on standard error: one line that changes in place on a terminal, one plain line per phase otherwise.
@@ -95,8 +96,8 @@ final class Talk implements Progress {
         drawnWidth = Math.max(shown.length(), 0);
     }
 
-    static String grouped(long value) {
-        return String.format(Locale.ROOT, "%,d", value).replace(',', ' ');
+    private static String grouped(long value) {
+        return Words.number(value);
     }
 
     private static String seconds(double value) {

@@ -52,6 +52,11 @@ public record Recipe(
         return new Recipe(window_days, balance, other, tail, rank, prior, unfamiliarShare);
     }
 
+    /** The same with another number of axes; 0 keeps all. */
+    public Recipe withRank(int axes) {
+        return new Recipe(window_days, balance, ridge, tail, axes, prior, unfamiliarShare);
+    }
+
     /** The form that the model file keeps. */
     public ObjectNode json() {
         ObjectNode node = Json.object().put("window_days", window_days);

@@ -47,6 +47,11 @@ public final class SamplePlant {
         return size;
     }
 
+    /** What everything is drawn from. */
+    public long seed() {
+        return seed;
+    }
+
     /** The nights, oldest first. */
     public List<LocalDate> nights() {
         List<LocalDate> nights = new ArrayList<>();

@@ -1,0 +1,17 @@
+package turnstone.cli;
+
+import java.util.Map;
+import turnstone.spark.Session;
+
+/** Starts the engine for a command; the launcher or {@code spark-submit} has said where. */
+final class Engine {
+    private Engine() {}
+
+    static Session open(String command, Console console) {
+        console.talk().phase("start the engine");
+        String master = System.getProperty("spark.master", "local[*]");
+        Session session = Session.open(new Session.Settings("turnstone " + command, master, Map.of()));
+        console.talk().done("engine " + session.spark().version() + " on " + master);
+        return session;
+    }
+}

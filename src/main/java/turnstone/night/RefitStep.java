@@ -1,0 +1,63 @@
+package turnstone.night;
+
+import java.util.List;
+import java.util.Optional;
+import turnstone.decide.Model;
+import turnstone.fault.Fault;
+import turnstone.ledger.DayEntry;
+import turnstone.ledger.Ledger;
+import turnstone.plant.Plant;
+import turnstone.refit.HeldOut;
+import turnstone.refit.ModelMaker;
+import turnstone.refit.Recipe;
+import turnstone.refit.WindowSums;
+import turnstone.shelf.Shelf;
+import turnstone.shelf.ShelfEntry;
+
+/** Makes candidates from the ledger and puts them on the shelf. */
+public final class RefitStep {
+    private RefitStep() {}
+
+    /** One model for each recipe, from the same sums, axes turned to agree in sign with what is in service. */
+    public static List<Model> make(
+            Plant plant,
+            Ledger ledger,
+            List<DayEntry> days,
+            List<Recipe> recipes,
+            HeldOut heldOut,
+            Optional<Model> inService) {
+        WindowSums sums = WindowSums.read(ledger, days);
+        ModelMaker maker = new ModelMaker(plant.materialNames(), plant.head(), plant.countScale());
+        return recipes.stream()
+                .map(recipe -> maker.make(recipe, sums, heldOut, inService).model())
+                .toList();
+    }
+
+    /**
+     * What is in service, checked against this plant's terms.
+     *
+     * @throws Fault of kind input where it is kept on another count scale or other channels
+     */
+    public static Optional<Model> inService(Plant plant, Shelf shelf) {
+        Optional<ShelfEntry> entry = shelf.inService();
+        if (entry.isEmpty()) {
+            return Optional.empty();
+        }
+        String fingerprint = entry.get().to();
+        Model model = shelf.model(fingerprint)
+                .map(node -> Model.read(node, "model " + fingerprint + " on the shelf"))
+                .orElseThrow(() -> Fault.storage("the model in service is not on the shelf")
+                        .at(shelf.describe())
+                        .found("no model " + fingerprint)
+                        .remedy("restore the shelf from a copy"));
+        List<String> differences = plant.countScale().differences(model.countScale());
+        if (!differences.isEmpty()) {
+            throw Fault.input("the model in service is on another count scale than the plant file")
+                    .at("model " + Words.shortened(fingerprint))
+                    .found(differences.get(0)
+                            + (differences.size() > 1 ? " and " + (differences.size() - 1) + " more" : ""))
+                    .remedy("use the plant file that it was made with, or another shelf");
+        }
+        return Optional.of(model);
+    }
+}
