@@ -57,16 +57,16 @@ final class ExactDeviations {
     }
 
     /** Mean of a part less the mean of everything, into one row of a matrix. */
-    static void addMean(Moments part, Moments total, ExtendedMatrix into, int row, DoubleDouble weight) {
+    static void addMean(Moments part, Totals total, ExtendedMatrix into, int row, DoubleDouble weight) {
         int d = part.channels();
         double[] high = new double[d];
         double[] low = new double[d];
-        boolean narrow = sumsFitWord(part) && sumsFitWord(total);
+        boolean narrow = sumsFitWord(part) && total.fitWord();
         WideInteger wide = new WideInteger();
         for (int i = 0; i < d; i++) {
             if (narrow) {
                 wide.setProduct(total.records(), part.sumHigh(i), part.sumLow(i));
-                wide.subtractProduct(part.records(), total.sumLow(i));
+                wide.subtractProduct(part.records(), total.sum(i).longValue());
                 wide.round(high, low, i);
             } else {
                 BigInteger own = part.sum(i).multiply(BigInteger.valueOf(total.records()));

@@ -6,7 +6,6 @@ import java.util.Map;
 import java.util.TreeMap;
 import turnstone.fault.Fault;
 import turnstone.moments.Moments;
-import turnstone.moments.MomentsAccumulator;
 
 /**
  * The cells of a request, merged exactly by material and weight: the order of cells leaves no trace.
@@ -17,9 +16,9 @@ final class Parts {
     private final List<List<Part>> byMaterial;
     private final long[] records;
     private final double[] weightedRecords;
-    private final Moments total;
+    private final Totals total;
 
-    private Parts(List<List<Part>> byMaterial, Moments total) {
+    private Parts(List<List<Part>> byMaterial, Totals total) {
         this.byMaterial = byMaterial;
         this.total = total;
         int g = byMaterial.size();
@@ -44,16 +43,16 @@ final class Parts {
                     .found(request.materials().size() + " material")
                     .expected("at least two");
         }
-        List<Map<Double, MomentsAccumulator>> merged = new ArrayList<>();
+        List<Map<Double, Moments>> merged = new ArrayList<>();
         for (int k = 0; k < request.materials().size(); k++) {
             merged.add(byWeight(request, k));
         }
         int channels = request.scale().channels();
-        MomentsAccumulator total = MomentsAccumulator.empty(channels);
+        Totals total = new Totals(channels);
         double weighted = 0;
-        for (Map<Double, MomentsAccumulator> ofMaterial : merged) {
-            for (Map.Entry<Double, MomentsAccumulator> entry : ofMaterial.entrySet()) {
-                total.merge(entry.getValue().snapshot());
+        for (Map<Double, Moments> ofMaterial : merged) {
+            for (Map.Entry<Double, Moments> entry : ofMaterial.entrySet()) {
+                total.add(entry.getValue());
                 weighted += entry.getKey() * entry.getValue().records();
             }
         }
@@ -61,23 +60,19 @@ final class Parts {
                 merged.stream().flatMap(m -> m.keySet().stream()).distinct().count() == 1;
         double factor = total.records() / weighted;
         List<List<Part>> parts = new ArrayList<>();
-        for (Map<Double, MomentsAccumulator> ofMaterial : merged) {
+        for (Map<Double, Moments> ofMaterial : merged) {
             List<Part> list = new ArrayList<>();
-            ofMaterial.forEach((weight, sums) -> list.add(new Part(sums.snapshot(), asCounted ? 1 : weight * factor)));
+            ofMaterial.forEach((weight, sums) -> list.add(new Part(sums, asCounted ? 1 : weight * factor)));
             parts.add(list);
         }
-        return new Parts(parts, total.snapshot());
+        return new Parts(parts, total);
     }
 
-    private static Map<Double, MomentsAccumulator> byWeight(FitRequest request, int material) {
-        Map<Double, MomentsAccumulator> sums = new TreeMap<>();
+    private static Map<Double, Moments> byWeight(FitRequest request, int material) {
+        Map<Double, Moments> sums = new TreeMap<>();
         for (Cell cell : request.cells().get(material)) {
             if (cell.moments().records() > 0) {
-                sums.computeIfAbsent(
-                                cell.weight(),
-                                weight ->
-                                        MomentsAccumulator.empty(request.scale().channels()))
-                        .merge(cell.moments());
+                sums.merge(cell.weight(), cell.moments(), Moments::plus);
             }
         }
         if (sums.isEmpty()) {
@@ -106,7 +101,7 @@ final class Parts {
     }
 
     /** Unweighted sums over everything. */
-    Moments total() {
+    Totals total() {
         return total;
     }
 }

@@ -6,12 +6,15 @@ import turnstone.fault.Fault;
 /**
  * Finds directions whose within variance is no larger than that of the rounding to counts, step²/12 a channel, carried through the tail.
  *
- * <p>A direction x counts where x·Sw·x ≤ {@link #TIMES_ROUNDING}·x·N·x with N = T·diag(step²/12)·Tᵀ. An eigenvalue of that pencil is estimated
+ * <p>A direction x counts where x·Sw·x ≤ t·x·N·x with t = 1 for lossless counts, 2 for rounded ones, and N = T·diag(step²/12)·Tᵀ. An eigenvalue of that pencil is estimated
  * first; only where it is near the limit are the directions counted, by the signs of the pivots of Sw − limit·N (Sylvester's law of inertia).
  */
 final class RoundingNoise {
-    /** Rounding errors spread evenly have variance step²/12; a sample of it seldom passes twice that. */
-    static final double TIMES_ROUNDING = 2;
+    /** Lossless counts: what is below the variance of even rounding is remarked upon. */
+    private static final double LOSSLESS_TIMES = 1;
+
+    /** Rounded counts: a sample of the variance of even rounding seldom passes twice its expectation. */
+    private static final double ROUNDED_TIMES = 2;
 
     /** How far above the limit an estimate may lie and still be looked at closely: it is good to a percent. */
     private static final double NEAR = 1.5;
@@ -36,7 +39,8 @@ final class RoundingNoise {
      * @throws Fault of kind input where the counts are rounded
      */
     Optional<String> check(SpectralEstimate estimate, double[] equilibration) {
-        double limit = TIMES_ROUNDING * scatter.degreesOfFreedom();
+        double times = request.roundedSource() == RoundedSource.ROUNDED ? ROUNDED_TIMES : LOSSLESS_TIMES;
+        double limit = times * scatter.degreesOfFreedom();
         double smallest = estimate.smallestAgainst(x -> noise(x, equilibration));
         if (smallest > NEAR * limit) {
             return Optional.empty();

