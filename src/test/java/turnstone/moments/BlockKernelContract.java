@@ -85,17 +85,19 @@ abstract class BlockKernelContract {
     @Test
     void mayBeSharedByThreads() throws Exception {
         BlockKernel shared = kernel();
-        double[] rows = rows(64, 33);
-        double[] expected = oracle(rows, 64, 33);
         ExecutorService threads = Executors.newFixedThreadPool(4);
         try {
             List<Callable<Integer>> folds = new ArrayList<>();
             for (int t = 0; t < 4; t++) {
+                // Other records in each thread: a scratch space that two of them use would show.
+                int records = 200 + t;
+                double[] rows = rows(records, 33);
+                double[] expected = oracle(rows, records, 33);
                 folds.add(() -> {
                     int wrong = 0;
-                    for (int round = 0; round < 50; round++) {
+                    for (int round = 0; round < 200; round++) {
                         double[] triangle = new double[expected.length];
-                        shared.fold(rows, 64, 33, triangle);
+                        shared.fold(rows, records, 33, triangle);
                         wrong += Arrays.equals(triangle, expected) ? 0 : 1;
                     }
                     return wrong;
