@@ -95,7 +95,7 @@ abstract class BlockKernelContract {
                 double[] expected = oracle(rows, records, 33);
                 folds.add(() -> {
                     int wrong = 0;
-                    for (int round = 0; round < 200; round++) {
+                    for (int round = 0; round < 3000; round++) {
                         double[] triangle = new double[expected.length];
                         shared.fold(rows, records, 33, triangle);
                         wrong += Arrays.equals(triangle, expected) ? 0 : 1;
