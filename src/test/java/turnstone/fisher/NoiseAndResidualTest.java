@@ -58,6 +58,24 @@ class NoiseAndResidualTest {
                 .isEmpty();
     }
 
+    /** Exact dependence on many records leaves pivots of about 1e-32 of either sign: the limit, not the sign, must refuse them. */
+    @Test
+    void dependentChannelsAreRefusedWhateverRoundingLeaves() {
+        CheckTable wine = ReferenceFitTest.table("wine");
+        for (int i = 0; i < 12; i++) {
+            List<List<BigDecimal>> records = new ArrayList<>();
+            for (List<BigDecimal> record : wine.records()) {
+                List<BigDecimal> longer = new ArrayList<>(record);
+                longer.add(record.get(i).multiply(BigDecimal.valueOf(3)).add(record.get(i + 1)));
+                records.add(longer);
+            }
+            FitRequest request = CheckTable.of(wine.labels(), records).request();
+            assertThatExceptionOfType(Fault.class)
+                    .isThrownBy(() -> Fit.of(request))
+                    .withMessageContaining("c14 = 3·c" + (i + 1) + " + c" + (i + 2) + " (up to a constant)");
+        }
+    }
+
     /** Trace and degrees of freedom against the records themselves: the energy of each about its own mean. */
     @Test
     void expectedEnergyIsThatOfTheRecords() {
