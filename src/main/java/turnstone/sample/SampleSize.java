@@ -1,5 +1,7 @@
 package turnstone.sample;
 
+import java.io.Serializable;
+
 /**
  * How large a sample is.
  *
@@ -9,7 +11,8 @@ package turnstone.sample;
  * @param recordsPerShowing at least 1
  * @param channels of each sorter and of the plant's axis, at least 16
  */
-public record SampleSize(int sorters, int nights, int showingsPerPair, int recordsPerShowing, int channels) {
+public record SampleSize(int sorters, int nights, int showingsPerPair, int recordsPerShowing, int channels)
+        implements Serializable {
     /** Checks the ranges. */
     public SampleSize {
         check("sorters", sorters, 1, Fleet.NAMES.size());
