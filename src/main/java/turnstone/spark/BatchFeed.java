@@ -62,8 +62,12 @@ final class BatchFeed implements Feed {
         RowLayout columns = layout;
         return scan.executeColumnar()
                 .toJavaRDD()
-                .mapPartitions(
-                        (Iterator<ColumnarBatch> batches) -> task.run(new RowCursor(new BatchRows(batches), columns)));
+                .mapPartitions((Iterator<ColumnarBatch> batches) -> run(task, batches, columns));
+    }
+
+    private static <R> Iterator<R> run(PartitionTask<R> task, Iterator<ColumnarBatch> batches, RowLayout columns) {
+        BatchRows rows = new BatchRows(batches, columns);
+        return task.run(new RowCursor(rows, columns, rows::elementsMayBeNull));
     }
 
     @Override
@@ -79,10 +83,18 @@ final class BatchFeed implements Feed {
     /** The rows of batch after batch; the row object is the batch's own and moves along. */
     private static final class BatchRows implements Iterator<InternalRow> {
         private final Iterator<ColumnarBatch> batches;
+        private final int arrayAt;
+        private boolean elementsMayBeNull = true;
         private Iterator<InternalRow> current = Collections.emptyIterator();
 
-        BatchRows(Iterator<ColumnarBatch> batches) {
+        BatchRows(Iterator<ColumnarBatch> batches, RowLayout columns) {
             this.batches = batches;
+            this.arrayAt = columns.layout() == ColumnNames.Layout.ARRAY ? columns.channelAt()[0] : -1;
+        }
+
+        /** Known for a whole batch, which saves looking at every element. */
+        boolean elementsMayBeNull() {
+            return elementsMayBeNull;
         }
 
         @Override
@@ -91,7 +103,10 @@ final class BatchFeed implements Feed {
                 if (!batches.hasNext()) {
                     return false;
                 }
-                current = batches.next().rowIterator();
+                ColumnarBatch batch = batches.next();
+                elementsMayBeNull =
+                        arrayAt < 0 || batch.column(arrayAt).getChild(0).hasNull();
+                current = batch.rowIterator();
             }
             return true;
         }

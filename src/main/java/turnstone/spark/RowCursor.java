@@ -1,6 +1,7 @@
 package turnstone.spark;
 
 import java.util.Iterator;
+import java.util.function.BooleanSupplier;
 import org.apache.spark.rdd.InputFileBlockHolder;
 import org.apache.spark.sql.catalyst.InternalRow;
 import org.apache.spark.sql.catalyst.util.ArrayData;
@@ -12,6 +13,7 @@ import turnstone.measure.SourceType;
 final class RowCursor implements RecordCursor {
     private final Iterator<InternalRow> rows;
     private final RowLayout layout;
+    private final BooleanSupplier elementsMayBeNull;
     private final TextMemo[] memos;
     private double[] values = {};
     private int channelCount;
@@ -22,8 +24,14 @@ final class RowCursor implements RecordCursor {
     private UTF8String fileBytes;
     private String file = "";
 
-    RowCursor(Iterator<InternalRow> rows, RowLayout layout) {
+    /**
+     * Walks rows.
+     *
+     * @param elementsMayBeNull whether an array of channels of the row just taken can hold nulls; they are looked for only then
+     */
+    RowCursor(Iterator<InternalRow> rows, RowLayout layout, BooleanSupplier elementsMayBeNull) {
         this.rows = rows;
+        this.elementsMayBeNull = elementsMayBeNull;
         this.layout = layout;
         this.memos = new TextMemo[layout.textAt().length];
         for (int i = 0; i < memos.length; i++) {
@@ -58,7 +66,7 @@ final class RowCursor implements RecordCursor {
         ArrayData array = row.getArray(at);
         hold(array.numElements());
         CellType type = layout.channelTypes()[0];
-        if (!anyNull(array, channelCount)) {
+        if (!elementsMayBeNull.getAsBoolean() || !anyNull(array, channelCount)) {
             type.numbers(array, values, channelCount);
             return;
         }

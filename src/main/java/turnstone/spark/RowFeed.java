@@ -23,7 +23,7 @@ final class RowFeed implements Feed {
         return frame.queryExecution()
                 .toRdd()
                 .toJavaRDD()
-                .mapPartitions((Iterator<InternalRow> rows) -> task.run(new RowCursor(rows, columns)));
+                .mapPartitions((Iterator<InternalRow> rows) -> task.run(new RowCursor(rows, columns, () -> true)));
     }
 
     @Override

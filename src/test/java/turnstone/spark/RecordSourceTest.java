@@ -120,6 +120,30 @@ class RecordSourceTest {
     }
 
     @Test
+    void aMissingElementOfAnArrayIsNeverReadAsANumber(Session session) {
+        List<InventedDay.Invented> records = InventedDay.records(3, SEED);
+        Path file = folder.resolve("nulls");
+        InventedDay.arrayFrame(session, records, DataTypes.FloatType)
+                .withColumn(
+                        "channels",
+                        functions.expr(
+                                "CASE WHEN sorter = 'curlew' THEN transform(channels, (x, i) -> IF(i = 5, NULL, x))"
+                                        + " WHEN sorter = 'dunlin' THEN NULL ELSE channels END"))
+                .coalesce(1)
+                .write()
+                .parquet(file.toString());
+        FoldResult found = fold(parquet(session, file, InventedDay.asArray()));
+        assertThat(found.readPath()).isEqualTo(ReadPath.COLUMN_BATCHES);
+        assertThat(found.counts().accepted()).isEqualTo(36);
+        assertThat(found.counts().quarantined())
+                .containsEntry("non finite", 36L)
+                .containsEntry("wrong channel count", 36L);
+        assertThat(found.counts().quarantine())
+                .filteredOn(record -> record.sorter().equals("curlew"))
+                .allSatisfy(record -> assertThat(record.channel()).isEqualTo(6));
+    }
+
+    @Test
     void originsAreFilesAndRowNumbers(Session session) {
         List<InventedDay.Invented> records = new ArrayList<>(InventedDay.records(6, SEED));
         InventedDay.Invented sound = records.get(100);
