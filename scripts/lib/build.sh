@@ -49,6 +49,8 @@ build() {
     : >"$target/turnstone.stamp.next"
     # Jars of another choice of dependencies must not stay on the class path.
     if [ ! -f "$target/turnstone.stamp" ] || [ "$home/pom.xml" -nt "$target/turnstone.stamp" ]; then rm -rf "$target/engine"; fi
+    # Nor may classes: the compiler looks at what is newer only, and a class whose neighbour changed is not.
+    rm -rf "$target/launcher/classes" "$target/launcher/maven-status"
     rm -f "$target/turnstone.stamp"
     (cd "$home" && JAVA_HOME=$java_home exec "$maven" -q -B -ntp -Dstyle.color=never -Dlauncher package) >"$log" 2>&1 </dev/null &
     local maven_pid=$!

@@ -7,7 +7,7 @@ final class Commands {
     private Commands() {}
 
     static CommandLine line(Console console) {
-        return new CommandLine(new Turnstone())
+        CommandLine line = new CommandLine(new Turnstone())
                 .addSubcommand(new NightlyCommand(console))
                 .addSubcommand(new ScaleCommand(console))
                 .addSubcommand(new PostCommand(console))
@@ -21,5 +21,15 @@ final class Commands {
                 .addSubcommand(new FitCommand(console))
                 .addSubcommand(new ProjectCommand(console))
                 .addSubcommand(new SampleCommand(console));
+        endWithNewline(line);
+        line.getSubcommands().values().forEach(Commands::endWithNewline);
+        return line;
+    }
+
+    /** The help text ends where its footer does, without a newline. */
+    private static void endWithNewline(CommandLine line) {
+        String[] footer = line.getCommandSpec().usageMessage().footer();
+        footer[footer.length - 1] += "%n";
+        line.getCommandSpec().usageMessage().footer(footer);
     }
 }

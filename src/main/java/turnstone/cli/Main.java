@@ -40,7 +40,19 @@ public final class Main {
         line.setCaseInsensitiveEnumValuesAllowed(true);
         line.setParameterExceptionHandler((e, given) -> usage(e, err));
         line.setExecutionExceptionHandler((e, command, parsed) -> failure(e, talk, err, trace));
-        return line.execute(arguments);
+        try {
+            return line.execute(arguments);
+        } catch (OutOfMemoryError e) {
+            talk.wipe();
+            err.println(
+                    "turnstone: out of memory (" + e.getMessage() + "); give it more with TURNSTONE_HEAP, such as 6g");
+            return Fault.Kind.STORAGE.exitCode();
+        } catch (LinkageError e) {
+            talk.wipe();
+            err.println("turnstone: the program does not fit together: " + firstLine(String.valueOf(e.getMessage()))
+                    + "; remove the folder target and start again");
+            return DEFECT;
+        }
     }
 
     private static int usage(ParameterException e, PrintStream err) {

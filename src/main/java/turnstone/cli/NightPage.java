@@ -36,7 +36,8 @@ final class NightPage {
         lines.add("");
         lines.addAll(result.verdict().text().lines().toList());
         lines.add("");
-        plant.cautions().forEach(lines::add);
+        String said = result.verdict().text().replaceAll("\\s+", " ");
+        plant.cautions().stream().filter(caution -> !said.contains(caution)).forEach(lines::add);
         lines.add("files of this run: " + result.run().path());
         if (result.released().isPresent()) {
             lines.add("released: journal entry " + result.released().get().number());

@@ -22,6 +22,7 @@ final class Talk implements Progress {
     private final PrintStream err;
     private final Screen screen;
     private String phase = "";
+    private long expected;
     private long phaseStarted_ms;
     private long drawn_ms;
     private int drawnWidth;
@@ -32,30 +33,31 @@ final class Talk implements Progress {
     }
 
     @Override
-    public synchronized void phase(String name) {
+    public synchronized void phase(String name, long records) {
         wipe();
         phase = name;
+        expected = records;
         phaseStarted_ms = System.currentTimeMillis();
         drawn_ms = 0;
         draw(name + " …");
     }
 
     @Override
-    public synchronized void records(long done, long total) {
+    public synchronized void records(long done) {
         long now = System.currentTimeMillis();
-        if (screen == Screen.PLAIN || now - drawn_ms < REDRAW_MS) {
+        if (screen == Screen.PLAIN || phase.isEmpty() || now - drawn_ms < REDRAW_MS) {
             return;
         }
         drawn_ms = now;
         double seconds = Math.max(1, now - phaseStarted_ms) / 1000.0;
         double rate = done / seconds;
         StringBuilder line = new StringBuilder(phase).append("  ").append(grouped(done));
-        if (total > 0) {
-            line.append(" of ").append(grouped(total));
+        if (expected > 0) {
+            line.append(" of ").append(grouped(expected));
         }
         line.append(" records, ").append(grouped(Math.round(rate))).append(" a second");
-        if (total > done && rate > 0) {
-            line.append(", about ").append(seconds((total - done) / rate)).append(" left");
+        if (expected > done && rate > 0) {
+            line.append(", about ").append(seconds((expected - done) / rate)).append(" left");
         }
         draw(line.toString());
     }

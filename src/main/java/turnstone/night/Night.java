@@ -133,7 +133,7 @@ public final class Night {
 
     /** Folds a day, writes what was quarantined, and refuses a day that is not sound. */
     public PostStep.Folded fold(Day day, Set<String> without, Optional<RunFolder> run) {
-        progress.phase("fold " + day.day());
+        progress.phase("fold " + day.day(), day.source().rows());
         PostStep.Folded folded = PostStep.fold(plant, day, without);
         run.ifPresent(folder ->
                 folder.write("quarantine.csv", QuarantineTable.csv(folded.fold().counts())));
@@ -167,7 +167,7 @@ public final class Night {
         if (plant.project().write() == ProjectSpec.Write.OFF) {
             return Optional.empty();
         }
-        progress.phase("project " + day.day());
+        progress.phase("project " + day.day(), day.source().rows());
         TableSpec.Form form = plant.project().form() == TableFormat.CSV ? TableSpec.Form.CSV : TableSpec.Form.PARQUET;
         ProjectSettings settings =
                 new ProjectSettings(run.path("projection").toUri().toString(), form, ALL, 0);

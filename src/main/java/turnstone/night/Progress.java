@@ -2,16 +2,20 @@ package turnstone.night;
 
 /** What a long command says while it works; the command line decides how it looks. */
 public interface Progress {
-    /** A phase begins, such as {@code "fold 2026-03-13"}. */
-    void phase(String name);
-
     /**
-     * Some of the phase is done.
+     * A phase begins, such as {@code "fold 2026-03-13"}.
      *
-     * @param done records so far
-     * @param total records expected, or 0 where not known
+     * @param records that it will read, or 0 where that is not known
      */
-    void records(long done, long total);
+    void phase(String name, long records);
+
+    /** A phase begins that reads no records, or nobody knows how many. */
+    default void phase(String name) {
+        phase(name, 0);
+    }
+
+    /** So many records of the phase have been read. */
+    void records(long done);
 
     /** The phase has ended; {@code summary} is the line that stays. */
     void done(String summary);
@@ -22,10 +26,10 @@ public interface Progress {
     /** Says nothing. */
     Progress SILENT = new Progress() {
         @Override
-        public void phase(String name) {}
+        public void phase(String name, long records) {}
 
         @Override
-        public void records(long done, long total) {}
+        public void records(long done) {}
 
         @Override
         public void done(String summary) {}

@@ -60,7 +60,7 @@ public final class SampleNight {
                 Set.copyOf(ledger.days().stream().map(DayEntry::day).toList());
         for (LocalDate date : nights.subList(0, nights.size() - 1)) {
             if (!posted.contains(date)) {
-                Day day = night.open(date, Set.of());
+                Day day = Day.open(session, plant, date, Set.of());
                 PostStep.Folded folded = night.fold(day, Set.of(), Optional.empty());
                 PostStep.post(ledger, folded.draft(), Replace.NO);
                 progress.done("posted " + date + ": " + Night.counts(folded));

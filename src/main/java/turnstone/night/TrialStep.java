@@ -69,7 +69,7 @@ public final class TrialStep {
         TrialPairs pairs = pairs(plant, ledger, before, contest, showings);
         pairs.seenWhole().forEach(result::oneGroupOnly);
         progress.done("re-made " + Words.number(pairs.models().size()) + " pairs of models");
-        progress.phase("trial of " + day.day());
+        progress.phase("trial of " + day.day(), day.source().rows());
         TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), QUARANTINE_KEPT);
         for (TrialForm form : TrialForm.values()) {
             result.tally(form, Side.CANDIDATE, tallies.tally(form, Side.CANDIDATE));
