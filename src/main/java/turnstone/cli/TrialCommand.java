@@ -10,6 +10,7 @@ import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
 import turnstone.decide.Model;
 import turnstone.fault.Fault;
+import turnstone.ledger.DayEntry;
 import turnstone.ledger.Ledger;
 import turnstone.night.Day;
 import turnstone.night.Night;
@@ -68,12 +69,14 @@ final class TrialCommand implements Callable<Integer> {
                         .orElseThrow(() -> Fault.input("this model was made from a table, not from a ledger")
                                 .at("model " + candidate)),
                 "model " + candidate);
-        if (ledger.day(day).isEmpty()) {
-            throw Fault.input(day + " is not posted").at(ledger.describe()).remedy("post it first");
-        }
+        DayEntry posted = ledger.day(day)
+                .orElseThrow(() -> Fault.input(day + " is not posted")
+                        .at(ledger.describe())
+                        .remedy("post it first"));
         Optional<Model> inService = RefitStep.inService(file, shelf);
         try (Session session = Engine.open("trial", console)) {
-            Day found = new Night(file, session, console.talk(), Clock.systemUTC()).open(day, Set.of());
+            Day found =
+                    new Night(file, session, console.talk(), Clock.systemUTC()).open(day, Set.copyOf(posted.without()));
             TrialStep.Tried tried =
                     TrialStep.run(file, ledger, found, new TrialStep.Contest(recipe, model, inService), console.talk());
             RunFolder run = RunFolder.next(Places.runs(file), day);

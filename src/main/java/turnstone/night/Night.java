@@ -6,6 +6,7 @@ import java.time.LocalDate;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
+import java.util.TreeSet;
 import turnstone.decide.Model;
 import turnstone.decide.Projector;
 import turnstone.json.Json;
@@ -87,9 +88,10 @@ public final class Night {
         record.put("engine", session.spark().version());
         record.put("master", session.spark().sparkContext().master());
 
-        Day day = open(date, Set.of());
+        Set<String> without = leftOut(ledger, date);
+        Day day = open(date, without);
         record.lap("find and count files");
-        PostStep.Posted posted = post(ledger, day, run);
+        PostStep.Posted posted = post(ledger, day, without, run);
         record.lap("fold and post");
 
         Recipe recipe = Recipes.of(plant).get(0);
@@ -121,8 +123,18 @@ public final class Night {
         return day;
     }
 
-    private PostStep.Posted post(Ledger ledger, Day day, RunFolder run) {
-        PostStep.Folded folded = fold(day, Set.of(), Optional.of(run));
+    /** What a posted day was posted without stays out of every later run of that day. */
+    private Set<String> leftOut(Ledger ledger, LocalDate date) {
+        Set<String> without =
+                ledger.day(date).map(entry -> new TreeSet<>(entry.without())).orElseGet(TreeSet::new);
+        if (!without.isEmpty()) {
+            progress.remark(date + " is posted without " + String.join(", ", without) + ", and run without it again");
+        }
+        return without;
+    }
+
+    private PostStep.Posted post(Ledger ledger, Day day, Set<String> without, RunFolder run) {
+        PostStep.Folded folded = fold(day, without, Optional.of(run));
         PostStep.Posted posted = PostStep.post(ledger, folded.draft(), Replace.NO);
         progress.done(
                 posted.outcome() == PostOutcome.POSTED

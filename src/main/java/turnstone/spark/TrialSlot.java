@@ -44,7 +44,8 @@ final class TrialSlot {
     TrialSlot(TrialForm form, Slot slot, TrialModels models) {
         this.form = form;
         this.slot = slot;
-        this.pair = models.find(form, slot.trayGroup, slot.instrument);
+        this.pair =
+                models.find(form, slot.trayGroup, slot.instrument).filter(found -> found.tries(slot.keys.material()));
         this.candidate = pair.map(TrialModels.Pair::candidate).map(Judged::new).orElse(null);
         this.inService =
                 pair.flatMap(TrialModels.Pair::inService).map(Judged::new).orElse(null);

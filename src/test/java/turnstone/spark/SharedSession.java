@@ -6,7 +6,7 @@ import org.junit.jupiter.api.extension.ParameterContext;
 import org.junit.jupiter.api.extension.ParameterResolver;
 
 /** One session for all tests of a run, closed at its end; two task slots, and one more try for a failed task. */
-final class SharedSession implements ParameterResolver {
+public final class SharedSession implements ParameterResolver {
     private static final ExtensionContext.Namespace OURS = ExtensionContext.Namespace.create(SharedSession.class);
 
     private record Held(Session session) implements AutoCloseable {
@@ -23,6 +23,11 @@ final class SharedSession implements ParameterResolver {
 
     @Override
     public Object resolveParameter(ParameterContext parameter, ExtensionContext context) {
+        return of(context);
+    }
+
+    /** The session, for extensions that need it themselves. */
+    public static Session of(ExtensionContext context) {
         return context.getRoot()
                 .getStore(OURS)
                 .getOrComputeIfAbsent(
