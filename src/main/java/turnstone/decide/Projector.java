@@ -145,6 +145,13 @@ public final class Projector implements Serializable {
         return best;
     }
 
+    /** The score of every material at a position, in the model's order, written to {@code scores}; the largest is the nearest material. */
+    public void scores(double[] position, double[] scores) {
+        for (int k = 0; k < scoreConstants.length; k++) {
+            scores[k] = DecisionRule.score(scoreWeights[k], scoreConstants[k], position);
+        }
+    }
+
     /** Position, decision and residual of one record: everything that the model says of it. */
     public void judge(double[] counts, int from, double[] position, Judgement out) {
         position(counts, from, position);

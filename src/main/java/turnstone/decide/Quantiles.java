@@ -62,6 +62,13 @@ public final class Quantiles {
         return hits == of ? 1 : betaInverse(confidence, hits + 1.0, (double) (of - hits));
     }
 
+    /** P(T ≤ t) for Student's law with the stated degrees of freedom, whole or not. */
+    public static double studentShare(double t, double degreesOfFreedom) {
+        requirePositive(degreesOfFreedom);
+        double half = withinStudent(t, degreesOfFreedom) / 2;
+        return t < 0 ? 0.5 - half : 0.5 + half;
+    }
+
     private static double withinStudent(double t, double degreesOfFreedom) {
         double square = t * t;
         return SpecialFunctions.beta(0.5, degreesOfFreedom / 2, square / (degreesOfFreedom + square));

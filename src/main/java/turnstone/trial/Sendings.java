@@ -69,13 +69,16 @@ final class Sendings {
     }
 
     private static boolean isProduct(Duty duty, TallyCell cell) {
-        boolean familiar = cell.recognition() == Recognition.FAMILIAR;
-        boolean target = duty.targets().contains(cell.decided());
-        if (duty.productStream() == Duty.Stream.EJECTED) {
-            return familiar && target;
-        }
-        boolean ejected = familiar && !target && duty.infeedMix().getOrDefault(cell.decided(), 0.0) > 0;
-        return !ejected;
+        boolean ejected = cell.recognition() == Recognition.FAMILIAR && ejects(duty, cell.decided());
+        return ejected == (duty.productStream() == Duty.Stream.EJECTED);
+    }
+
+    /** Whether the duty ejects what is decided to be this material. */
+    static boolean ejects(Duty duty, String material) {
+        boolean target = duty.targets().contains(material);
+        return duty.productStream() == Duty.Stream.EJECTED
+                ? target
+                : !target && duty.infeedMix().getOrDefault(material, 0.0) > 0;
     }
 
     List<Part> parts() {
