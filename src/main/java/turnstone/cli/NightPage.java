@@ -36,8 +36,7 @@ final class NightPage {
         lines.add("");
         lines.addAll(result.verdict().text().lines().toList());
         lines.add("");
-        String said = result.verdict().text().replaceAll("\\s+", " ");
-        plant.cautions().stream().filter(caution -> !said.contains(caution)).forEach(lines::add);
+        lines.addAll(plant.cautions());
         lines.add("files of this run: " + result.run().path());
         if (result.released().isPresent()) {
             lines.add("released: journal entry " + result.released().get().number());

@@ -15,11 +15,6 @@ final class PlantReader {
     private static final double USUAL_QUARANTINE_LIMIT = 0.02;
     private static final long USUAL_BYTES_PER_TASK = 256L << 20;
 
-    private static final List<String> USUAL_CAUTIONS = List.of(
-            "A trial is on trays, not on the belt. Verify a release with a sampled bale or a hand sort before relying on it.",
-            "Materials that may be hazardous are subject to local rules; these figures replace no prescribed test, and a qualified person decides.",
-            "Changing coefficients on a running sorter moves air valves: follow the machine maker's lock-out procedure.");
-
     private final Path file;
     private final Entry root;
 
@@ -75,7 +70,7 @@ final class PlantReader {
                 project(),
                 duties.duties(root, groups),
                 ReleaseRule.of(root.text("release", "by hand")),
-                root.optional("cautions").map(Entry::texts).orElse(USUAL_CAUTIONS));
+                root.optional("cautions").map(Entry::texts).orElse(List.of()));
     }
 
     private List<Material> materials() {
