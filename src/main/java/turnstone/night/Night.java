@@ -147,8 +147,8 @@ public final class Night {
     public PostStep.Folded fold(Day day, Set<String> without, Optional<RunFolder> run) {
         progress.phase("fold " + day.day(), day.source().rows());
         PostStep.Folded folded = PostStep.fold(plant, day, without);
-        run.ifPresent(folder ->
-                folder.write("quarantine.csv", QuarantineTable.csv(folded.fold().counts())));
+        run.ifPresent(
+                folder -> folder.write("quarantine.csv", folded.fold().counts().quarantineCsv()));
         PostStep.requireSound(plant, day, folded.fold().counts());
         return folded;
     }

@@ -6,7 +6,6 @@ import java.nio.charset.StandardCharsets;
 import java.nio.file.FileAlreadyExistsException;
 import java.nio.file.Files;
 import java.nio.file.Path;
-import java.nio.file.StandardCopyOption;
 import java.time.LocalDate;
 import java.util.Locale;
 import turnstone.fault.Fault;
@@ -42,7 +41,7 @@ public final class RunFolder {
                 }
             }
         } catch (IOException e) {
-            throw cannotWrite(ofDay, e);
+            throw WholeFile.cannotWrite(ofDay, e);
         }
         throw Fault.storage("no free number for a run")
                 .at(ofDay.toString())
@@ -79,20 +78,6 @@ public final class RunFolder {
     }
 
     private void write(String name, byte[] content) {
-        Path aside = folder.resolve("." + name + ".part");
-        try {
-            Files.write(aside, content);
-            Files.move(aside, folder.resolve(name), StandardCopyOption.ATOMIC_MOVE);
-        } catch (IOException e) {
-            throw cannotWrite(folder.resolve(name), e);
-        }
-    }
-
-    private static Fault cannotWrite(Path path, IOException e) {
-        return Fault.storage("can't be written")
-                .at(path.toString())
-                .found(e.getClass().getSimpleName() + " " + e.getMessage())
-                .remedy("check space and permissions, or name another folder in the plant file")
-                .because(e);
+        WholeFile.write(folder.resolve(name), content);
     }
 }

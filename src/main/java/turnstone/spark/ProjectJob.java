@@ -41,7 +41,7 @@ public final class ProjectJob {
         try {
             write(source, sharedSpec, sharedProjector, settings.form(), output);
             output.requireRecords(settings.form(), counts.accepted() + counts.noSignal());
-            output.text("quarantine.csv", quarantine(counts));
+            output.text("quarantine.csv", counts.quarantineCsv());
             if (source.columns().index(KeyColumn.MATERIAL) >= 0) {
                 output.text("tally.csv", tallied.tally().csv());
             }
@@ -66,12 +66,6 @@ public final class ProjectJob {
                     .expected("a share of at most " + Numerals.shortest(mostShare))
                     .remedy("look at the records, or allow more");
         }
-    }
-
-    private static String quarantine(RecordCounts counts) {
-        StringBuilder text = new StringBuilder(QuarantinedRecord.CSV_HEADER).append('\n');
-        counts.quarantine().forEach(record -> text.append(record.csv()).append('\n'));
-        return text.toString();
     }
 
     private static Tallied tally(

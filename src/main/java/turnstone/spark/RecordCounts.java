@@ -108,6 +108,13 @@ public final class RecordCounts implements Serializable {
         return List.copyOf(kept);
     }
 
+    /** Those records as a CSV table with its header. */
+    public String quarantineCsv() {
+        StringBuilder text = new StringBuilder(QuarantinedRecord.CSV_HEADER).append('\n');
+        kept.forEach(record -> text.append(record.csv()).append('\n'));
+        return text.toString();
+    }
+
     /** The share of quarantined records among those of the day; 0 where there are none. */
     public double quarantinedShare() {
         long ofTheDay = read - passedOver - leftOut;
