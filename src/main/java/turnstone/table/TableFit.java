@@ -92,7 +92,7 @@ public final class TableFit {
         FoldResult fold = FoldJob.run(source, intake, FoldSettings.usual());
         ProjectJob.requireFew(fold.counts(), order.mostQuarantined());
         TreeMap<String, Moments> byLabel = new TreeMap<>(CODE_POINTS);
-        fold.moments().forEach((key, moments) -> byLabel.merge(key.material(), moments, Moments::plus));
+        byLabel.putAll(fold.byMaterial());
         if (byLabel.size() < 2) {
             throw Fault.input("a projection needs records of at least two labels")
                     .at(order.table().path())
