@@ -20,6 +20,8 @@ import turnstone.night.Places;
 import turnstone.night.RefitStep;
 import turnstone.night.Words;
 import turnstone.plant.Plant;
+import turnstone.plant.RefitRecipe.Balance;
+import turnstone.plant.RefitRecipe.Weighting;
 import turnstone.refit.HeldOut;
 import turnstone.refit.Recipe;
 import turnstone.refit.Recipes;
@@ -38,6 +40,8 @@ import turnstone.shelf.Shelf;
         })
 final class RefitCommand implements Callable<Integer> {
     private static final String ANALYTIC = "analytic";
+    private static final String NONE = "none";
+    private static final Set<String> BALANCE_WORDS = Set.of("instruments", "materials", NONE);
 
     private final Console console;
 
@@ -70,6 +74,21 @@ final class RefitCommand implements Callable<Integer> {
 
     @Option(names = "--axes", paramLabel = "N", description = "axes kept; 0 keeps all (default: the plant file's)")
     Integer axes;
+
+    @Option(
+            names = "--tail",
+            paramLabel = "STEPS",
+            description =
+                    "linear steps on the sums, such as savitzky-golay:9/2/1,bins:2, or none (default: the plant file's)")
+    String tail;
+
+    @Option(
+            names = "--balance",
+            paramLabel = "KIND",
+            split = ",",
+            description =
+                    "what weighs equally whatever its records: instruments, materials, or none (default: the plant file's)")
+    Set<String> balance;
 
     @Option(
             names = "--leave-out-group",
@@ -137,9 +156,29 @@ final class RefitCommand implements Callable<Integer> {
                 : ridges.stream()
                         .map(ridge -> planned.get(0).withRidge(ridge(ridge)))
                         .toList();
-        return axes == null
-                ? wanted
-                : wanted.stream().map(recipe -> recipe.withRank(axes)).toList();
+        return wanted.stream().map(this::changed).toList();
+    }
+
+    private Recipe changed(Recipe recipe) {
+        Recipe changed = axes == null ? recipe : recipe.withRank(axes);
+        if (tail != null) {
+            changed = changed.withTail(TailText.read(tail));
+        }
+        return balance == null ? changed : changed.withBalance(balance());
+    }
+
+    private Balance balance() {
+        for (String kind : balance) {
+            if (!BALANCE_WORDS.contains(kind) || (kind.equals(NONE) && balance.size() > 1)) {
+                throw Fault.usage("not a balance")
+                        .at("--balance")
+                        .found(String.join(",", balance))
+                        .expected("instruments, materials, both with a comma between, or none");
+            }
+        }
+        return new Balance(
+                balance.contains("instruments") ? Weighting.EQUAL : Weighting.AS_COUNTED,
+                balance.contains("materials") ? Weighting.EQUAL : Weighting.AS_COUNTED);
     }
 
     static OptionalDouble ridge(String text) {

@@ -57,6 +57,16 @@ public record Recipe(
         return new Recipe(window_days, balance, ridge, tail, axes, prior, unfamiliarShare);
     }
 
+    /** The same with another tail. */
+    public Recipe withTail(TailSpec other) {
+        return new Recipe(window_days, balance, ridge, other, rank, prior, unfamiliarShare);
+    }
+
+    /** The same with other weights. */
+    public Recipe withBalance(Balance other) {
+        return new Recipe(window_days, other, ridge, tail, rank, prior, unfamiliarShare);
+    }
+
     /** The form that the model file keeps. */
     public ObjectNode json() {
         ObjectNode node = Json.object().put("window_days", window_days);
