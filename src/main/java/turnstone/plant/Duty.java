@@ -11,7 +11,8 @@ import java.util.Map;
  * @param productStream where the product goes
  * @param sorters the machines that do it, in plant order
  * @param infeedMix share by mass of each material in the infeed, together 1; a material that is not listed has none
- * @param requirements what must hold for a release
+ * @param requirements what must hold for a release, whatever is in service
+ * @param terms the figure that is fixed, the gain over what is in service, guards, limits and costs
  */
 public record Duty(
         String name,
@@ -19,7 +20,8 @@ public record Duty(
         Stream productStream,
         List<String> sorters,
         Map<String, Double> infeedMix,
-        List<Requirement> requirements) {
+        List<Requirement> requirements,
+        DutyTerms terms) {
     /** The two ways off the belt. */
     public enum Stream {
         /** The air valves send the product off. */
@@ -30,6 +32,17 @@ public record Duty(
         static Stream of(String word) {
             return Words.constant(Stream.class, word);
         }
+    }
+
+    /** A duty with {@linkplain DutyTerms#standard standard terms}. */
+    public Duty(
+            String name,
+            List<String> targets,
+            Stream productStream,
+            List<String> sorters,
+            Map<String, Double> infeedMix,
+            List<Requirement> requirements) {
+        this(name, targets, productStream, sorters, infeedMix, requirements, DutyTerms.standard());
     }
 
     /** Keeps copies. */
@@ -47,5 +60,10 @@ public record Duty(
             shares[k] = infeedMix.getOrDefault(materials.get(k), 0.0);
         }
         return shares;
+    }
+
+    /** The same duty with other terms. */
+    public Duty with(DutyTerms other) {
+        return new Duty(name, targets, productStream, sorters, infeedMix, requirements, other);
     }
 }

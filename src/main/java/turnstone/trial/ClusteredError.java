@@ -35,13 +35,14 @@ final class ClusteredError {
         return sum;
     }
 
-    double degreesOfFreedom() {
+    /** Satterthwaite's, with a further variance that is taken as known. */
+    double degreesOfFreedom(double known) {
         double squares = 0;
         for (List<Double> stratum : strata.values()) {
             double v = variance(stratum);
             squares += v * v / (stratum.size() - 1);
         }
-        double v = variance();
+        double v = variance() + known;
         return v * v / squares;
     }
 

@@ -37,6 +37,20 @@ final class MassFigure {
         targetShare = w;
     }
 
+    /** The figure where half a record more of every material was sent, and half a record more was not: never 0 or 1. */
+    static double withHalfARecord(Requirement.Figure figure, Sendings sendings) {
+        double a = 0;
+        double c = 0;
+        double w = 0;
+        for (Sendings.Part part : sendings.parts()) {
+            double sent = part.massShare() * (part.sentShare() * part.records() + 0.5) / (part.records() + 1);
+            a += part.target() ? sent : 0;
+            c += part.target() ? 0 : sent;
+            w += part.target() ? part.massShare() : 0;
+        }
+        return figure == Requirement.Figure.DECISION_RECOVERY ? a / w : a / (a + c);
+    }
+
     /** NaN where nothing was sent (purity) or no target is in the infeed (recovery). */
     double value() {
         return switch (figure) {
@@ -54,6 +68,15 @@ final class MassFigure {
                 part.target()
                         ? part.massShare() * otherSent / (sent * sent)
                         : -part.massShare() * targetSent / (sent * sent);
+        };
+    }
+
+    /** The slope of the figure with the mass share of this material; the figure of a mix that is scaled as a whole stays as it is. */
+    double mixSlope(Sendings.Part part) {
+        double sent = targetSent + otherSent;
+        return switch (figure) {
+            case DECISION_RECOVERY -> part.target() ? (part.sentShare() - value()) / targetShare : 0;
+            case DECISION_PURITY -> part.sentShare() * (part.target() ? otherSent : -targetSent) / (sent * sent);
         };
     }
 

@@ -10,6 +10,7 @@ import java.util.TreeMap;
 import java.util.function.Predicate;
 import turnstone.fault.Fault;
 import turnstone.json.Json;
+import turnstone.plant.Duty;
 
 /**
  * Records of a trial counted by (showing, truth, bin of the score), for one duty, form and side: whole numbers, nothing else.
@@ -41,6 +42,22 @@ public final class ScoreHistogram implements Serializable {
     /** A histogram of nothing. */
     public static ScoreHistogram empty() {
         return new ScoreHistogram();
+    }
+
+    /** What a tally says of scores: only which side of the decision for the nearest material a record lies on. */
+    static ScoreHistogram ofDecisions(Duty duty, TrialTally tally) {
+        ScoreHistogram histogram = empty();
+        tally.cells().forEach((cell, records) -> {
+            switch (cell.recognition()) {
+                case FAMILIAR -> {
+                    int bin = Sendings.ejects(duty, cell.decided()) ? ScoreBins.NEAREST : ScoreBins.NEAREST - 1;
+                    histogram.add(cell.showing(), cell.truth(), bin, records);
+                }
+                case UNFAMILIAR -> histogram.addUnfamiliar(cell.showing(), cell.truth(), records);
+                case NO_SIGNAL -> histogram.addNoSignal(cell.showing(), cell.truth(), records);
+            }
+        });
+        return histogram;
     }
 
     /** Counts familiar records in a bin of {@link ScoreBins}. */

@@ -5,7 +5,9 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.SortedSet;
 import java.util.TreeMap;
+import java.util.TreeSet;
 import turnstone.plant.Duty;
 
 /**
@@ -20,8 +22,12 @@ final class Sendings {
     /** One showing: records sent to the product stream, of all records with or without signal. */
     record Showing(String showing, String sorter, long sent, long records) {}
 
-    /** One material of the infeed mix: its share by mass and its showings, by id. */
-    record Part(String material, double massShare, boolean target, List<Showing> showings) {
+    /** One material of the infeed mix: its share by mass with the deviation of that, and its showings, by id. */
+    record Part(String material, double massShare, double massDeviation, boolean target, List<Showing> showings) {
+        Part with(List<Showing> others) {
+            return new Part(material, massShare, massDeviation, target, others);
+        }
+
         long records() {
             return showings.stream().mapToLong(Showing::records).sum();
         }
@@ -38,6 +44,7 @@ final class Sendings {
         this.parts = parts;
     }
 
+    /** By the decision for the nearest material. */
     static Sendings of(Duty duty, TrialTally tally, Map<String, TrialShowing> showings) {
         Map<String, long[]> byShowing = new TreeMap<>();
         tally.cells().forEach((cell, count) -> {
@@ -45,6 +52,26 @@ final class Sendings {
             sentAndAll[0] += isProduct(duty, cell) ? count : 0;
             sentAndAll[1] += count;
         });
+        return of(duty, byShowing, showings);
+    }
+
+    /** By a cut of {@link ScoreBins}. */
+    static Sendings of(Duty duty, ScoreHistogram histogram, int cut, Map<String, TrialShowing> showings) {
+        Map<String, long[]> byShowing = new TreeMap<>();
+        histogram.rows().forEach((key, row) -> {
+            long ejected = 0;
+            for (int bin = cut; bin < ScoreBins.COUNT; bin++) {
+                ejected += row[bin];
+            }
+            long all = ScoreHistogram.sum(row);
+            long[] sentAndAll = byShowing.computeIfAbsent(key.showing(), id -> new long[2]);
+            sentAndAll[0] += duty.productStream() == Duty.Stream.EJECTED ? ejected : all - ejected;
+            sentAndAll[1] += all;
+        });
+        return of(duty, byShowing, showings);
+    }
+
+    private static Sendings of(Duty duty, Map<String, long[]> byShowing, Map<String, TrialShowing> showings) {
         Map<String, List<Showing>> byMaterial = new LinkedHashMap<>();
         byShowing.forEach((id, sentAndAll) -> {
             TrialShowing showing = showings.get(id);
@@ -62,10 +89,27 @@ final class Sendings {
         new TreeMap<>(duty.infeedMix()).forEach((material, share) -> {
             if (share > 0) {
                 List<Showing> shown = byMaterial.getOrDefault(material, List.of());
-                parts.add(new Part(material, share, duty.targets().contains(material), List.copyOf(shown)));
+                double deviation = duty.terms().mixDeviation().getOrDefault(material, 0.0);
+                parts.add(new Part(material, share, deviation, duty.targets().contains(material), List.copyOf(shown)));
             }
         });
         return new Sendings(List.copyOf(parts));
+    }
+
+    /** The same of one sorter alone. */
+    Sendings onlySorter(String sorter) {
+        return new Sendings(parts.stream()
+                .map(part -> part.with(part.showings().stream()
+                        .filter(showing -> showing.sorter().equals(sorter))
+                        .toList()))
+                .toList());
+    }
+
+    /** Every sorter that showed anything of the infeed, by name. */
+    SortedSet<String> sorters() {
+        SortedSet<String> sorters = new TreeSet<>();
+        parts.forEach(part -> part.showings().forEach(showing -> sorters.add(showing.sorter())));
+        return sorters;
     }
 
     private static boolean isProduct(Duty duty, TallyCell cell) {
@@ -111,12 +155,8 @@ final class Sendings {
     }
 
     private static Part withoutSent(Part part) {
-        return new Part(
-                part.material(),
-                part.massShare(),
-                part.target(),
-                part.showings().stream()
-                        .map(showing -> new Showing(showing.showing(), showing.sorter(), 0, showing.records()))
-                        .toList());
+        return part.with(part.showings().stream()
+                .map(showing -> new Showing(showing.showing(), showing.sorter(), 0, showing.records()))
+                .toList());
     }
 }

@@ -73,7 +73,7 @@ class EstimatorTest {
         error.add("b", 3);
         // v_a = 2·2 = 4 on 1, v_b = 3/2·6 = 9 on 2: V = 13, degrees of freedom 169/(16 + 40.5).
         assertThat(error.variance()).isCloseTo(13, within(1e-14));
-        assertThat(error.degreesOfFreedom()).isCloseTo(169 / 56.5, within(1e-14));
+        assertThat(error.degreesOfFreedom(0)).isCloseTo(169 / 56.5, within(1e-14));
     }
 
     @Test
