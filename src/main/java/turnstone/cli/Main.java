@@ -21,7 +21,10 @@ public final class Main {
     private Main() {}
 
     public static void main(String[] arguments) {
-        int code = run(arguments, System.out, System.err);
+        Talk talk = talk(System.err);
+        Interruption watched = Interruption.watch(talk, System.err);
+        int code = run(arguments, System.out, System.err, talk);
+        watched.end();
         System.out.flush();
         System.err.flush();
         System.exit(code);
@@ -29,8 +32,15 @@ public final class Main {
 
     /** Runs one command and returns its exit code; never lets an exception out. */
     static int run(String[] arguments, PrintStream out, PrintStream err) {
+        return run(arguments, out, err, talk(err));
+    }
+
+    private static Talk talk(PrintStream err) {
         boolean terminal = "yes".equals(System.getProperty("turnstone.terminal"));
-        Talk talk = new Talk(err, terminal ? Talk.Screen.TERMINAL : Talk.Screen.PLAIN);
+        return new Talk(err, terminal ? Talk.Screen.TERMINAL : Talk.Screen.PLAIN);
+    }
+
+    private static int run(String[] arguments, PrintStream out, PrintStream err, Talk talk) {
         boolean trace = List.of(arguments).contains("--trace");
         CommandLine line = Commands.line(new Console(out, talk));
         line.setOut(new PrintWriter(out, true, StandardCharsets.UTF_8));
@@ -69,13 +79,17 @@ public final class Main {
     }
 
     private static int failure(Exception e, Talk talk, PrintStream err, boolean trace) {
+        if (Interruption.isUnderWay()) {
+            // What the engine throws while it is being ended; the line about it is said elsewhere.
+            return INTERRUPTED;
+        }
         talk.wipe();
         int code;
         if (e instanceof Fault fault) {
             err.println("turnstone: " + fault.getMessage());
             code = fault.kind().exitCode();
         } else if (isInterrupt(e)) {
-            err.println("turnstone: interrupted; nothing was published after this point, run it again");
+            err.println(Interruption.LINE);
             code = INTERRUPTED;
         } else {
             err.println("turnstone: a defect in this program: " + e.getClass().getSimpleName() + ": "

@@ -13,6 +13,7 @@ import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
 import turnstone.fault.Fault;
 import turnstone.json.Json;
+import turnstone.ledger.DayCounts;
 import turnstone.ledger.Ledger;
 import turnstone.night.Day;
 import turnstone.night.Night;
@@ -87,7 +88,7 @@ final class NightlyCommand implements Callable<Integer> {
                 file = Plant.read(plant);
                 Optional<LocalDate> chosen = day != null ? Optional.of(day) : newestNotPosted(session, file);
                 if (chosen.isEmpty()) {
-                    console.say("every day of the source is posted already; name one with --day to run it again");
+                    nothingToDo();
                     return 0;
                 }
                 date = chosen.get();
@@ -122,6 +123,10 @@ final class NightlyCommand implements Callable<Integer> {
         PostStep.Folded folded = night.fold(found, Set.of(), Optional.empty());
         console.talk().done("folded " + date);
         Ledger ledger = Places.ledger(file);
+        if (common.json) {
+            console.json(lookedAt(ledger, folded, date));
+            return 0;
+        }
         console.say("dry run: nothing was posted, refitted or released");
         console.say(Night.counts(folded));
         console.say(folded.draft().moments().showings().size() + " showings, "
@@ -133,6 +138,32 @@ final class NightlyCommand implements Callable<Integer> {
         console.say("then: refit from up to " + file.refit().window_days() + " days, trial, verdict"
                 + (file.project().write() == turnstone.plant.ProjectSpec.Write.ON ? ", projection of the day" : ""));
         return 0;
+    }
+
+    private static ObjectNode lookedAt(Ledger ledger, PostStep.Folded folded, LocalDate date) {
+        DayCounts counts = folded.draft().counts();
+        ObjectNode node = Json.object()
+                .put("dryRun", true)
+                .put("day", date.toString())
+                .put("read", counts.read())
+                .put("accepted", counts.accepted())
+                .put("noSignal", counts.noSignal());
+        ObjectNode quarantined = node.putObject("quarantined");
+        counts.quarantined().forEach(quarantined::put);
+        return node.put("showings", folded.draft().moments().showings().size())
+                .put(
+                        "postedRevision",
+                        ledger.day(date).map(entry -> entry.revision()).orElse(0));
+    }
+
+    private void nothingToDo() {
+        if (common.json) {
+            ObjectNode node = Json.object();
+            node.putNull("day");
+            console.json(node);
+            return;
+        }
+        console.say("every day of the source is posted already; name one with --day to run it again");
     }
 
     private int run(Night night, Plant file, LocalDate date) {

@@ -14,15 +14,23 @@ import org.apache.spark.sql.SparkSession;
 /**
  * A Spark session with sober settings: no web page, no catalogue on disk, nothing of the source silently left out.
  *
- * <p>Closing it stops the engine and removes its temporary folder.
+ * <p>Closing it stops the engine and removes its temporary folder, unless an engine was running already: that one belongs to whoever
+ * started it.
  */
 public final class Session implements AutoCloseable {
+    private enum Engine {
+        STARTED_HERE,
+        RUNNING_BEFORE
+    }
+
     private final SparkSession spark;
     private final Path warehouse;
+    private final Engine engine;
 
-    private Session(SparkSession spark, Path warehouse) {
+    private Session(SparkSession spark, Path warehouse, Engine engine) {
         this.spark = spark;
         this.warehouse = warehouse;
+        this.engine = engine;
     }
 
     /**
@@ -51,6 +59,7 @@ public final class Session implements AutoCloseable {
      */
     public static Session open(Settings settings) {
         Path warehouse = temporaryFolder();
+        Engine engine = SparkSession.getDefaultSession().isDefined() ? Engine.RUNNING_BEFORE : Engine.STARTED_HERE;
         SparkSession.Builder builder = SparkSession.builder().appName(settings.name());
         if (settings.master() != null) {
             builder.master(settings.master());
@@ -71,7 +80,7 @@ public final class Session implements AutoCloseable {
                 && System.getProperty("log4j.configurationFile") == null) {
             spark.sparkContext().setLogLevel("ERROR");
         }
-        return new Session(spark, warehouse);
+        return new Session(spark, warehouse, engine);
     }
 
     /** The engine's own session. */
@@ -91,7 +100,9 @@ public final class Session implements AutoCloseable {
 
     @Override
     public void close() {
-        spark.stop();
+        if (engine == Engine.STARTED_HERE) {
+            spark.stop();
+        }
         remove(warehouse);
     }
 
