@@ -109,7 +109,7 @@ final class GainEstimator {
         return within(size, whole.getAsDouble(), all, blocks);
     }
 
-    private Gain within(Size size, double whole, Sums all, TreeMap<Block, Sums> blocks) {
+    private Gain within(Size size, double whole, Sums all, Map<Block, Sums> blocks) {
         int count = blocks.size();
         double[] pseudo = new double[count];
         double mean = 0;
@@ -146,7 +146,7 @@ final class GainEstimator {
     }
 
     /** Puts every showing into its block; the least number of showings of a material of the infeed. */
-    private int sort(ScoreHistogram histogram, TreeMap<Block, Sums> blocks, Function<Sums, FrontierSums> side) {
+    private int sort(ScoreHistogram histogram, Map<Block, Sums> blocks, Function<Sums, FrontierSums> side) {
         TreeMap<String, Integer> perMaterial = new TreeMap<>();
         duty.infeedMix().forEach((material, share) -> {
             if (share > 0) {
@@ -176,7 +176,7 @@ final class GainEstimator {
         private final int blocks;
         private final int leastShowings;
 
-        Size(TreeMap<Block, Sums> blocks, int leastShowings) {
+        Size(Map<Block, Sums> blocks, int leastShowings) {
             TreeSet<LocalDate> dates = new TreeSet<>();
             TreeSet<String> machines = new TreeSet<>();
             blocks.keySet().forEach(block -> {
