@@ -3,12 +3,14 @@ package turnstone.cli;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Model.CommandSpec;
+import picocli.CommandLine.Option;
 import picocli.CommandLine.ParameterException;
 import picocli.CommandLine.Spec;
 
 /** The program without a command: says which there are. */
 @Command(
         name = "turnstone",
+        versionProvider = Version.class,
         description = {"Discriminant projections for fleets of near-infrared sorters, from exact sums.", ""},
         footer = {
             "",
@@ -21,6 +23,12 @@ import picocli.CommandLine.Spec;
 final class Turnstone implements Runnable {
     @Mixin
     CommonOptions common;
+
+    @Option(
+            names = {"-V", "--version"},
+            versionHelp = true,
+            description = "print the version")
+    boolean version;
 
     @Spec
     CommandSpec spec;
