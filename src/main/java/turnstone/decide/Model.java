@@ -3,6 +3,7 @@ package turnstone.decide;
 import com.fasterxml.jackson.databind.JsonNode;
 import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 import java.util.Optional;
 import java.util.OptionalDouble;
@@ -55,7 +56,7 @@ public final class Model {
         axes = ModelNumbers.matrix(content.required("axes"), r, d, "axes");
         centre = ModelNumbers.vector(content.required("centre"), d, "centre");
         fisherRatios = ModelNumbers.vector(content.required("fisherRatios"), r, "fisherRatios");
-        fisherShares = ModelNumbers.vector(content.required("fisherShares"), r, "fisherShares");
+        fisherShares = shares(content.required("fisherShares"), fisherRatios);
         List<ModelMaterial> list = new ArrayList<>();
         content.required("materials").forEach(node -> list.add(ModelMaterial.fromJson(node, d, r)));
         materials = List.copyOf(list);
@@ -117,6 +118,12 @@ public final class Model {
                     .remedy("take the model from the shelf again, or refit")
                     .because(e);
         }
+    }
+
+    /** None where every ratio is 0: shares of nothing are no numbers. */
+    private static double[] shares(JsonNode node, double[] ratios) {
+        boolean undefined = Arrays.stream(ratios).allMatch(ratio -> ratio == 0);
+        return ModelNumbers.vector(node, undefined ? 0 : ratios.length, "fisherShares");
     }
 
     private static void requireVersion(JsonNode version, String place) {

@@ -100,7 +100,10 @@ public final class ModelPage {
         line("Axes           Fisher ratio   share");
         double[] ratios = model.fisherRatios();
         double[] shares = model.fisherShares();
-        for (int a = 0; a < ratios.length; a++) {
+        if (shares.length == 0) {
+            line(String.format(Locale.ROOT, "  axis %-3d %17s  undefined", 1, number(ratios[0])));
+        }
+        for (int a = 0; a < shares.length; a++) {
             String bar = "#".repeat((int) Math.rint(shares[a] * BAR));
             line(String.format(
                             Locale.ROOT,
