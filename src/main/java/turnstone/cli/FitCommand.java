@@ -89,6 +89,8 @@ final class FitCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
+        Range.requireAxes("--axes", axes);
+        Range.requireShare("--max-quarantine", mostQuarantined);
         TableFit.Order order = new TableFit.Order(
                 new Table(table, Optional.of(label), channels, Optional.ofNullable(array)),
                 RefitCommand.ridge(ridge),

@@ -31,7 +31,7 @@ public final class Main {
     }
 
     /** Runs one command and returns its exit code; never lets an exception out. */
-    static int run(String[] arguments, PrintStream out, PrintStream err) {
+    public static int run(String[] arguments, PrintStream out, PrintStream err) {
         return run(arguments, out, err, talk(err));
     }
 

@@ -26,6 +26,11 @@ final class ModelFolder {
                     .at(folder.resolve(MODEL).toString())
                     .remedy("name another folder, or move this one away");
         }
+        if (Files.exists(folder) && !Files.isDirectory(folder)) {
+            throw Fault.input("there is a file where the folder should be")
+                    .at(folder.toString())
+                    .remedy("name another folder");
+        }
         WholeFile.folder(folder);
         return new ModelFolder(folder);
     }

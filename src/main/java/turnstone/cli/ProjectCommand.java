@@ -94,6 +94,7 @@ final class ProjectCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
+        Range.requireShare("--max-quarantine", mostQuarantined);
         if ((table == null) == (day == null)) {
             throw Fault.usage("name what to project: either --table FILE, or --plant FILE and --day DAY");
         }

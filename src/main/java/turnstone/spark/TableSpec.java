@@ -1,6 +1,7 @@
 package turnstone.spark;
 
 import java.util.List;
+import turnstone.fault.Fault;
 
 /**
  * A table of records on some file system.
@@ -21,6 +22,28 @@ public record TableSpec(List<String> paths, Form form, ColumnNames columns) {
         public static Form byName(String path) {
             String plain = path.endsWith(".gz") ? path.substring(0, path.length() - 3) : path;
             return plain.endsWith(".csv") || plain.endsWith(".txt") ? CSV : PARQUET;
+        }
+
+        /**
+         * By the ending of the name or, for a folder or pattern that doesn't say, by the names of the files there.
+         *
+         * @throws Fault of kind input where there are none, or files of both forms
+         */
+        public static Form of(Session session, String path) {
+            if (byName(path) == CSV) {
+                return CSV;
+            }
+            List<SourceFile> files = SourceFiles.find(
+                    List.of(path), session.spark().sparkContext().hadoopConfiguration());
+            long text =
+                    files.stream().filter(file -> byName(file.path()) == CSV).count();
+            if (text > 0 && text < files.size()) {
+                throw Fault.input("files of two forms")
+                        .at(path)
+                        .found(text + " of " + files.size() + " are CSV by their names")
+                        .remedy("give those of one form, by a pattern");
+            }
+            return text > 0 ? CSV : PARQUET;
         }
     }
 

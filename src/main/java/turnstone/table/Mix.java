@@ -3,6 +3,7 @@ package turnstone.table;
 import java.io.IOException;
 import java.math.BigDecimal;
 import java.nio.file.Files;
+import java.nio.file.NoSuchFileException;
 import java.nio.file.Path;
 import java.util.ArrayList;
 import java.util.Arrays;
@@ -113,6 +114,11 @@ public sealed interface Mix {
     private static List<String> lines(Path file) {
         try {
             return Files.readAllLines(file);
+        } catch (NoSuchFileException e) {
+            throw Fault.input("there is no such mix")
+                    .at(file.toString())
+                    .expected("as-counted, equal, or a file of lines material,share")
+                    .because(e);
         } catch (IOException e) {
             throw Fault.storage("the mix can't be read")
                     .at(file.toString())

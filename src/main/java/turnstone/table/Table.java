@@ -13,7 +13,7 @@ import turnstone.spark.TableSpec;
 /**
  * Which table, and which of its columns.
  *
- * @param path file, folder or pattern; CSV by its ending, else Parquet
+ * @param path file, folder or pattern; CSV by its ending or those of its files, else Parquet
  * @param label the column with the truth; empty where there is none
  * @param channels the columns that are channels; empty for every column but the label
  * @param array the one column that holds all channels as an array; empty where there is one column per channel
@@ -25,16 +25,16 @@ public record Table(String path, Optional<String> label, List<String> channels, 
 
     /** Finds and counts the files; columns that are neither label nor channel are left. */
     RecordSource open(Session session) {
-        return RecordSource.open(session, spec(names()));
+        return RecordSource.open(session, spec(session, names()));
     }
 
     /** Finds and counts the files; columns that are neither label nor channel are carried through. */
     RecordSource openCarrying(Session session) {
-        return RecordSource.open(session, spec(names().carryingOthers()));
+        return RecordSource.open(session, spec(session, names().carryingOthers()));
     }
 
-    private TableSpec spec(ColumnNames names) {
-        return new TableSpec(List.of(path), TableSpec.Form.byName(path), names);
+    private TableSpec spec(Session session, ColumnNames names) {
+        return new TableSpec(List.of(path), TableSpec.Form.of(session, path), names);
     }
 
     private ColumnNames names() {
