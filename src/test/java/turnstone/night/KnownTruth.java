@@ -8,12 +8,14 @@ import java.nio.file.Path;
 import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Arrays;
+import java.util.EnumMap;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import java.util.Set;
 import java.util.TreeMap;
+import java.util.TreeSet;
 import turnstone.decide.Judgement;
 import turnstone.decide.Model;
 import turnstone.decide.Projector;
@@ -28,6 +30,7 @@ import turnstone.measure.Head;
 import turnstone.measure.HeadOutcome;
 import turnstone.measure.HeadTrouble;
 import turnstone.measure.Instrument;
+import turnstone.measure.QuarantineReason;
 import turnstone.measure.ReferenceTable;
 import turnstone.moments.BlockKernels;
 import turnstone.moments.KernelChoice;
@@ -52,6 +55,7 @@ import turnstone.trial.Estimator;
 import turnstone.trial.Recognition;
 import turnstone.trial.TallyCell;
 import turnstone.trial.TrialForm;
+import turnstone.trial.TrialModels;
 import turnstone.trial.TrialShowing;
 import turnstone.trial.TrialTally;
 
@@ -113,24 +117,37 @@ final class KnownTruth {
         Recipe recipe = Recipes.of(plant).get(0);
         WindowSums sums = WindowSums.read(ledger, Window.before(ledger, last, recipe.window_days()));
         ModelMaker maker = new ModelMaker(plant.materialNames(), plant.head(), plant.countScale());
+        Judged trial = trial(last, maker, new TrialPairs.Maker(recipe, sums));
+        Judged truth = truth(maker.make(recipe, sums, HeldOut.NOTHING).model(), unseenTrays);
+        Map<String, Answer> answers = new TreeMap<>();
+        for (Duty duty : plant.duties()) {
+            double of = truth.recovery(duty).point().orElseThrow();
+            answers.put(duty.name(), new Answer(trial.recovery(duty), of));
+        }
+        return answers;
+    }
+
+    private Judged trial(LocalDate last, ModelMaker maker, TrialPairs.Maker candidate) {
         List<ShowingSums> showings = List.copyOf(fold(last).moments().showings().values());
-        TrialPairs pairs = TrialPairs.make(maker, new TrialPairs.Maker(recipe, sums), Optional.empty(), showings);
+        TrialModels models =
+                TrialPairs.make(maker, candidate, Optional.empty(), showings).models();
         Judged trial = new Judged();
         for (SampleShowing showing : sample.showings(last)) {
             plant.instrument(showing.sorter(), last).ifPresent(instrument -> {
                 int group = plant.trayGroup(showing.material(), showing.tray());
-                trial.judge(
-                        showing,
-                        pairs.models()
-                                .find(TrialForm.THIS_FLEET, group, instrument.name())
-                                .orElseThrow()
-                                .candidate());
+                TrialModels.Pair pair = models.find(TrialForm.THIS_FLEET, group, instrument.name())
+                        .orElseThrow();
+                trial.judge(showing, pair.candidate());
             });
         }
+        return trial;
+    }
+
+    private Judged truth(Model candidate, int unseenTrays) {
         Judged truth = new Judged();
-        Model candidate = maker.make(recipe, sums, HeldOut.NOTHING).model();
         Projector projector = Projector.of(candidate);
-        Set<String> targets = Set.of("PET bottle", "PE-HD", "PE-LD", "PP");
+        Set<String> targets = new TreeSet<>();
+        plant.duties().forEach(duty -> targets.addAll(duty.targets()));
         for (String sorter : sample.sorters()) {
             for (String material : sample.materials()) {
                 // Recovery rests on the targets alone; the others have only to be there.
@@ -140,12 +157,7 @@ final class KnownTruth {
                 }
             }
         }
-        Map<String, Answer> answers = new TreeMap<>();
-        for (Duty duty : plant.duties()) {
-            double of = truth.recovery(duty).point().orElseThrow();
-            answers.put(duty.name(), new Answer(trial.recovery(duty), of));
-        }
-        return answers;
+        return truth;
     }
 
     private HeadOutcome take(SampleRecord record, Instrument instrument) {
@@ -159,34 +171,39 @@ final class KnownTruth {
     }
 
     private DayDraft fold(LocalDate night) {
-        Map<LedgerKey, RowFolder> folders = new TreeMap<>();
-        List<ShowingSums> showings = new ArrayList<>();
-        TreeMap<String, Long> quarantined = new TreeMap<>();
-        long[] total = new long[HeadOutcome.values().length];
+        Fold fold = new Fold();
         for (SampleShowing showing : sample.showings(night)) {
             List<SampleRecord> records = sample.records(showing);
-            Optional<Instrument> known = plant.instrument(showing.sorter(), night);
-            if (known.isEmpty()) {
-                quarantined.merge("unknown sorter", (long) records.size(), Long::sum);
-                total[HeadOutcome.QUARANTINED.ordinal()] += records.size();
-                continue;
-            }
-            Instrument instrument = known.get();
+            plant.instrument(showing.sorter(), night)
+                    .ifPresentOrElse(
+                            instrument -> fold.add(showing, records, instrument),
+                            () -> fold.addUnknownSorter(records.size()));
+        }
+        return fold.draft(night);
+    }
+
+    /** A day on its way to the ledger. */
+    private final class Fold {
+        private final Map<LedgerKey, RowFolder> folders = new TreeMap<>();
+        private final List<ShowingSums> showings = new ArrayList<>();
+        private final TreeMap<String, Long> quarantined = new TreeMap<>();
+        private final Map<HeadOutcome, Long> total = new EnumMap<>(HeadOutcome.class);
+
+        void addUnknownSorter(long records) {
+            quarantined.merge(QuarantineReason.UNKNOWN_SORTER.label(), records, Long::sum);
+            total.merge(HeadOutcome.QUARANTINED, records, Long::sum);
+        }
+
+        void add(SampleShowing showing, List<SampleRecord> records, Instrument instrument) {
             int group = plant.trayGroup(showing.material(), showing.tray());
-            LedgerKey key = new LedgerKey(instrument.name(), showing.material(), group);
             RowFolder folder = folders.computeIfAbsent(
-                    key,
-                    k -> new RowFolder(
-                            counts.length,
-                            plant.countScale().fineChannels(),
-                            BlockKernels.choose(KernelChoice.AUTO),
-                            BLOCK_ROWS));
-            long[] outcomes = new long[total.length];
+                    new LedgerKey(instrument.name(), showing.material(), group), key -> folder());
+            Map<HeadOutcome, Long> outcomes = new EnumMap<>(HeadOutcome.class);
             long[] sums = new long[counts.length];
             for (SampleRecord record : records) {
                 HeadOutcome outcome = take(record, instrument);
-                outcomes[outcome.ordinal()]++;
-                total[outcome.ordinal()]++;
+                outcomes.merge(outcome, 1L, Long::sum);
+                total.merge(outcome, 1L, Long::sum);
                 if (outcome == HeadOutcome.ACCEPTED) {
                     folder.add(counts, 0);
                     Arrays.setAll(sums, c -> sums[c] + (long) counts[c]);
@@ -201,19 +218,31 @@ final class KnownTruth {
                     showing.tray(),
                     group,
                     showing.material(),
-                    outcomes[HeadOutcome.ACCEPTED.ordinal()],
-                    outcomes[HeadOutcome.NO_SIGNAL.ordinal()],
-                    outcomes[HeadOutcome.QUARANTINED.ordinal()],
+                    outcomes.getOrDefault(HeadOutcome.ACCEPTED, 0L),
+                    outcomes.getOrDefault(HeadOutcome.NO_SIGNAL, 0L),
+                    outcomes.getOrDefault(HeadOutcome.QUARANTINED, 0L),
                     Arrays.stream(sums).mapToObj(BigInteger::valueOf).toList()));
         }
-        Map<LedgerKey, Moments> moments = new TreeMap<>();
-        folders.forEach((key, folder) -> moments.put(key, folder.snapshot()));
-        DayCounts dayCounts = new DayCounts(
-                Arrays.stream(total).sum(),
-                total[HeadOutcome.ACCEPTED.ordinal()],
-                total[HeadOutcome.NO_SIGNAL.ordinal()],
-                quarantined);
-        return new DayDraft(night, List.of(), dayCounts, DayMoments.of(counts.length, moments, showings), List.of());
+
+        private RowFolder folder() {
+            return new RowFolder(
+                    counts.length,
+                    plant.countScale().fineChannels(),
+                    BlockKernels.choose(KernelChoice.AUTO),
+                    BLOCK_ROWS);
+        }
+
+        DayDraft draft(LocalDate night) {
+            Map<LedgerKey, Moments> moments = new TreeMap<>();
+            folders.forEach((key, folder) -> moments.put(key, folder.snapshot()));
+            DayCounts dayCounts = new DayCounts(
+                    total.values().stream().mapToLong(Long::longValue).sum(),
+                    total.getOrDefault(HeadOutcome.ACCEPTED, 0L),
+                    total.getOrDefault(HeadOutcome.NO_SIGNAL, 0L),
+                    quarantined);
+            DayMoments dayMoments = DayMoments.of(counts.length, moments, showings);
+            return new DayDraft(night, List.of(), dayCounts, dayMoments, List.of());
+        }
     }
 
     /** Records of showings, judged. */
