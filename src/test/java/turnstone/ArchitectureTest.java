@@ -50,6 +50,7 @@ class ArchitectureTest {
             Map.entry("decide", Set.of("fisher", "measure")),
             Map.entry("ledger", Set.of("moments", "measure", "store")),
             Map.entry("shelf", Set.of("decide", "store")),
+            Map.entry("audit", Set.of("store")),
             Map.entry("plant", Set.of("measure")),
             Map.entry("refit", Set.of("fisher", "decide", "ledger", "plant", "moments", "measure", "shelf")),
             Map.entry("trial", Set.of("refit", "decide", "plant", "measure", "moments")),
@@ -64,12 +65,12 @@ class ArchitectureTest {
                     "night",
                     Set.of(
                             "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
-                            "trial", "sample", "spark", "table")),
+                            "trial", "sample", "spark", "table", "audit")),
             Map.entry(
                     "cli",
                     Set.of(
                             "measure", "moments", "store", "fisher", "decide", "ledger", "shelf", "plant", "refit",
-                            "trial", "sample", "spark", "table", "night")));
+                            "trial", "sample", "spark", "table", "audit", "night")));
 
     private static final Set<String> ON_THE_ENGINE = Set.of("spark", "night", "cli");
 

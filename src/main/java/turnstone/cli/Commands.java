@@ -15,9 +15,12 @@ final class Commands {
                 .addSubcommand(new TrialCommand(console))
                 .addSubcommand(new ReleaseCommand(console))
                 .addSubcommand(new RevertCommand(console))
+                .addSubcommand(new WithdrawCommand(console))
                 .addSubcommand(new HistoryCommand(console))
                 .addSubcommand(new ShowCommand(console))
                 .addSubcommand(new VerifyCommand(console))
+                .addSubcommand(new KeyCommand(console))
+                .addSubcommand(AuditCommand.line(console))
                 .addSubcommand(new FitCommand(console))
                 .addSubcommand(new ProjectCommand(console))
                 .addSubcommand(new SampleCommand(console));

@@ -36,7 +36,8 @@ import turnstone.shelf.Shelf;
         footer = {
             "",
             "Examples: turnstone refit --plant plant.yaml --until 2026-03-14",
-            "          turnstone refit --plant plant.yaml --from 2026-03-02 --until 2026-03-06 --ridge 1e-4,1e-3"
+            "          turnstone refit --plant plant.yaml --from 2026-03-02 --until 2026-03-06 --ridge 1e-4,1e-3",
+            "          turnstone refit --again 3f9c21ab --plant plant.yaml"
         })
 final class RefitCommand implements Callable<Integer> {
     private static final String ANALYTIC = "analytic";
@@ -104,6 +105,12 @@ final class RefitCommand implements Callable<Integer> {
             description = "instruments to leave out, such as avocet@2026-03-01")
     Set<String> instruments = new TreeSet<>();
 
+    @Option(
+            names = "--again",
+            paramLabel = "MODEL",
+            description = "make this model anew from the ledger days that it states, and say whether the numbers are the same")
+    String again;
+
     RefitCommand(Console console) {
         this.console = console;
     }
@@ -113,6 +120,11 @@ final class RefitCommand implements Callable<Integer> {
         Plant file = plant.read();
         Ledger ledger = Places.ledger(file);
         Shelf shelf = Places.shelf(file);
+        if (again != null) {
+            requireAlone();
+            RefitAgain.run(console, common, file, Models.find(again, plant.file));
+            return 0;
+        }
         List<Recipe> recipes = recipes(file);
         List<DayEntry> window = window(ledger, recipes.get(0));
         TreeSet<Integer> fromZero = new TreeSet<>();
@@ -128,6 +140,19 @@ final class RefitCommand implements Callable<Integer> {
 
     private static Optional<Model> inService(Plant file, Shelf shelf) {
         return RefitStep.inService(file, shelf);
+    }
+
+    private void requireAlone() {
+        if (until != null
+                || from != null
+                || axes != null
+                || !ridges.isEmpty()
+                || !groups.isEmpty()
+                || !instruments.isEmpty()) {
+            throw Fault.usage("a model that is made again has its own window and recipe")
+                    .at("--again")
+                    .remedy("leave the other options out");
+        }
     }
 
     private static int inRange(int group, Plant file) {

@@ -3,14 +3,16 @@ package turnstone.cli;
 import java.util.concurrent.Callable;
 import picocli.CommandLine.Command;
 import picocli.CommandLine.Mixin;
-import picocli.CommandLine.Option;
 import turnstone.night.Places;
 import turnstone.shelf.ShelfEntry;
 
 /** {@code revert}: puts back what was in service before. */
 @Command(
         name = "revert",
-        description = "Puts back the model that was in service before the current one.",
+        description = {
+            "Puts back what was in service before the newest release, on the sorters that it went to.",
+            "Withdrawn models are passed over."
+        },
         footer = {"", "Example: turnstone revert --plant plant.yaml --reason \"PVC in the PET bales\""})
 final class RevertCommand implements Callable<Integer> {
     private final Console console;
@@ -21,11 +23,8 @@ final class RevertCommand implements Callable<Integer> {
     @Mixin
     PlantOption plant;
 
-    @Option(names = "--reason", paramLabel = "TEXT", required = true, description = "why, for the journal")
-    String reason;
-
-    @Option(names = "--by", paramLabel = "NAME", description = "who, for the journal (default: the user's name)")
-    String by = System.getProperty("user.name");
+    @Mixin
+    WhyOptions why;
 
     RevertCommand(Console console) {
         this.console = console;
@@ -33,7 +32,7 @@ final class RevertCommand implements Callable<Integer> {
 
     @Override
     public Integer call() {
-        ShelfEntry entry = Places.shelf(plant.read()).revert(reason, by);
+        ShelfEntry entry = Places.shelf(plant.read()).revert(why.reason, why.by);
         ShelfLines.print(console, common, entry, "reverted");
         return 0;
     }

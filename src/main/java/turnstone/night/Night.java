@@ -22,8 +22,10 @@ import turnstone.refit.HeldOut;
 import turnstone.refit.Recipe;
 import turnstone.refit.Recipes;
 import turnstone.refit.Window;
+import turnstone.shelf.Release;
 import turnstone.shelf.Shelf;
 import turnstone.shelf.ShelfEntry;
+import turnstone.shelf.SigningKey;
 import turnstone.shelf.VerdictReference;
 import turnstone.spark.ProjectJob;
 import turnstone.spark.ProjectResult;
@@ -196,9 +198,15 @@ public final class Night {
                 || verdict.inService().isEmpty()) {
             return Optional.empty();
         }
+        if (shelf.running().map(running -> !running.isWhole()).orElse(false)) {
+            progress.remark("not released by the night: single sorters run a model of their own; end the split by hand");
+            return Optional.empty();
+        }
         VerdictReference reference =
                 new VerdictReference(run.path("verdict.json").toString(), Json.sha256(content));
-        return Optional.of(shelf.releaseAfter(
-                lastChange, verdict.candidate(), Optional.of(reference), verdict.mainReason(), PROGRAM));
+        return Optional.of(shelf.release(Release.of(verdict.candidate(), verdict.mainReason(), PROGRAM)
+                .withVerdict(Optional.of(reference))
+                .withKey(plant.signing().privateKey().map(SigningKey::read))
+                .withLastEntry(lastChange)));
     }
 }

@@ -4,11 +4,15 @@ import java.net.URI;
 import java.net.URISyntaxException;
 import java.nio.file.Path;
 import java.time.Clock;
+import turnstone.audit.AuditJournal;
 import turnstone.decide.Model;
 import turnstone.fault.Fault;
 import turnstone.ledger.Ledger;
 import turnstone.plant.Plant;
+import turnstone.plant.SigningSpec;
+import turnstone.shelf.PublicKeyFile;
 import turnstone.shelf.Shelf;
+import turnstone.shelf.SigningRule;
 import turnstone.store.LocalStore;
 import turnstone.store.Store;
 
@@ -25,12 +29,29 @@ public final class Places {
         return Ledger.open(store(plant.ledger(), "ledger"), plant.countScale(), plant.head());
     }
 
-    /** The plant's shelf. */
+    /**
+     * The plant's shelf, with the plant's rule about signatures.
+     *
+     * @throws Fault of kind usage where the plant file names a public key that there is not
+     */
     public static Shelf shelf(Plant plant) {
         return Shelf.open(
-                store(plant.shelf(), "shelf"),
-                Clock.systemUTC(),
-                (model, place) -> Model.read(model, place).fingerprint());
+                        store(plant.shelf(), "shelf"),
+                        Clock.systemUTC(),
+                        (model, place) -> Model.read(model, place).fingerprint())
+                .withRule(rule(plant.signing()));
+    }
+
+    /** The journal of bale and hand-sort results. */
+    public static AuditJournal audits(Plant plant) {
+        return AuditJournal.in(store(plant.audits(), "audits"), Clock.systemUTC());
+    }
+
+    private static SigningRule rule(SigningSpec spec) {
+        SigningRule.Unsigned unsigned = spec.unsigned() == SigningSpec.Unsigned.REFUSED
+                ? SigningRule.Unsigned.REFUSED
+                : SigningRule.Unsigned.ALLOWED;
+        return new SigningRule(unsigned, spec.publicKey().map(PublicKeyFile::read));
     }
 
     /** The folder of runs. */

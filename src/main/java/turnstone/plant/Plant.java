@@ -181,6 +181,16 @@ public final class Plant {
         return content.release();
     }
 
+    /** Whether models have to be signed, and by whom. */
+    public SigningSpec signing() {
+        return content.signing();
+    }
+
+    /** Where the journal of bale and hand-sort results is: absolute path or URI. */
+    public String audits() {
+        return content.audits();
+    }
+
     /** Sentences to print beside figures. */
     public List<String> cautions() {
         return content.cautions();

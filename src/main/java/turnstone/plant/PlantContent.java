@@ -35,6 +35,8 @@ record PlantContent(
         ProjectSpec project,
         List<Duty> duties,
         ReleaseRule release,
+        SigningSpec signing,
+        String audits,
         List<String> cautions) {
     PlantContent {
         materials = List.copyOf(materials);

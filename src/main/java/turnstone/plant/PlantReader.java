@@ -69,8 +69,42 @@ final class PlantReader {
                 bytesPerTask(),
                 project(),
                 duties.duties(root, groups),
-                ReleaseRule.of(root.text("release", "by hand")),
+                release(),
+                signing(),
+                sources.resolved(root.text("audits", "audits")),
                 root.optional("cautions").map(Entry::texts).orElse(List.of()));
+    }
+
+    private ReleaseRule release() {
+        return ReleaseRule.of(root.text("release", "by hand"));
+    }
+
+    private SigningSpec signing() {
+        Optional<Entry> signing = root.optional("signing");
+        SigningSpec spec = new SigningSpec(
+                SigningSpec.Unsigned.of(
+                        signing.map(entry -> entry.text("unsigned", "allowed")).orElse("allowed")),
+                signing.flatMap(entry -> entry.text("publicKey")).map(this::besideFile),
+                signing.flatMap(entry -> entry.text("privateKey")).map(this::besideFile));
+        if (spec.unsigned() == SigningSpec.Unsigned.REFUSED) {
+            Entry entry = signing.orElseThrow();
+            if (spec.publicKey().isEmpty()) {
+                throw entry.fault("where unsigned models are refused, it has to be known whose signature counts")
+                        .found("no publicKey")
+                        .expected("signing.publicKey");
+            }
+            if (release() == ReleaseRule.AUTOMATIC && spec.privateKey().isEmpty()) {
+                throw entry.fault("a night that releases has to sign where unsigned models are refused")
+                        .found("release: automatic and no privateKey")
+                        .expected("signing.privateKey")
+                        .remedy("name the private key, or release by hand");
+            }
+        }
+        return spec;
+    }
+
+    private Path besideFile(String path) {
+        return file.toAbsolutePath().normalize().getParent().resolve(path);
     }
 
     private List<Material> materials() {

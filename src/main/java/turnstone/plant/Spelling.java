@@ -2,10 +2,19 @@ package turnstone.plant;
 
 import java.util.List;
 import java.util.Locale;
+import turnstone.fault.Fault;
 
 /** The nearest known word to a misspelt one. */
-final class Spelling {
+public final class Spelling {
     private Spelling() {}
+
+    /** The refusal of a name that is none of these, with the nearest of them where it may have been meant. */
+    public static Fault unknown(String kind, String name, List<String> known) {
+        String nearest = nearest(name, known);
+        String hint = near(name, nearest) ? ", did you mean `" + nearest + "`?" : "";
+        return Fault.usage("unknown " + kind + " `" + name + "`" + hint)
+                .expected("one of " + String.join(", ", known));
+    }
 
     /** The word with the least changes of one letter; the first of equals. */
     static String nearest(String word, List<String> known) {

@@ -1,5 +1,6 @@
 package turnstone.refit;
 
+import com.fasterxml.jackson.databind.JsonNode;
 import java.util.Set;
 import java.util.TreeSet;
 import turnstone.ledger.LedgerKey;
@@ -17,6 +18,15 @@ public record HeldOut(Set<Integer> trayGroups, Set<String> instruments) {
     public HeldOut {
         trayGroups = java.util.Collections.unmodifiableSet(new TreeSet<>(trayGroups));
         instruments = java.util.Collections.unmodifiableSet(new TreeSet<>(instruments));
+    }
+
+    /** What a model's recipe says was left out; nothing where it says nothing. */
+    static HeldOut fromRecipe(JsonNode recipe) {
+        Set<Integer> groups = new TreeSet<>();
+        recipe.path("without").path("trayGroups").forEach(group -> groups.add(group.intValue()));
+        Set<String> names = new TreeSet<>();
+        recipe.path("without").path("instruments").forEach(name -> names.add(name.asText()));
+        return new HeldOut(groups, names);
     }
 
     /** One tray group, all instruments kept. */

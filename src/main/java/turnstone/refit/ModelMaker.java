@@ -6,6 +6,7 @@ import java.util.Arrays;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
 import java.util.SortedMap;
 import java.util.SortedSet;
 import java.util.TreeMap;
@@ -105,19 +106,24 @@ public final class ModelMaker {
         Fit oriented = guide.map(other -> Orientation.of(fit, other.axes(), Orientation.Manner.SIGNS)
                         .turned())
                 .orElse(fit);
-        return new Made(Model.of(oriented, context(recipe, sums, heldOut, there, oriented, guide)), keptWhole);
+        return new Made(Model.of(oriented, context(recipe, sums, heldOut, keptWhole, oriented, guide)), keptWhole);
     }
 
     private ModelContext context(
-            Recipe recipe, WindowSums sums, HeldOut heldOut, List<String> there, Fit fit, Optional<Model> guide) {
+            Recipe recipe,
+            WindowSums sums,
+            HeldOut heldOut,
+            Set<String> keptWhole,
+            Fit fit,
+            Optional<Model> guide) {
         ObjectNode pretreatment = Json.object();
         pretreatment.set("head", head.json());
         pretreatment.set("tail", recipe.tail().json());
-        ModelContext context = ModelContext.of(SCOPE, channels, scale, madeFrom(sums, heldOut))
+        ModelContext context = ModelContext.of(SCOPE, channels, scale, madeFrom(sums, heldOut, keptWhole))
                 .withPretreatment(pretreatment)
                 .withBalance(recipe.json().path("balance"))
                 .withRecipe(recipeWith(recipe, heldOut))
-                .withDecisionPriors(priors(recipe, there, fit))
+                .withDecisionPriors(priors(recipe, fit.materials(), fit))
                 .withUnfamiliarShare(recipe.unfamiliarShare());
         return guide.map(other -> context.withOrientedTo(other.fingerprint())).orElse(context);
     }
@@ -167,7 +173,7 @@ public final class ModelMaker {
         return priors;
     }
 
-    private static MadeFrom madeFrom(WindowSums sums, HeldOut heldOut) {
+    private static MadeFrom madeFrom(WindowSums sums, HeldOut heldOut, Set<String> keptWhole) {
         List<MadeFrom.Day> days = sums.days().stream()
                 .map(entry -> new MadeFrom.Day(entry.day().toString(), entry.revision(), entry.fingerprint()))
                 .toList();
@@ -176,7 +182,7 @@ public final class ModelMaker {
         SortedMap<LedgerKey, long[]> parts = new TreeMap<>();
         for (Map.Entry<LedgerKey, Long> cell : records.entrySet()) {
             LedgerKey key = cell.getKey();
-            if (!heldOut.holds(key)) {
+            if (!heldOut.holds(key) || keptWhole.contains(key.material())) {
                 long[] part =
                         parts.computeIfAbsent(new LedgerKey(key.instrument(), key.material(), 0), k -> new long[2]);
                 part[0] = Math.addExact(part[0], cell.getValue());

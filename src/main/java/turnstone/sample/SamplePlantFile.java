@@ -55,6 +55,7 @@ final class SamplePlantFile {
                   - {figure: decision purity, unseen: tray, least: 0.90, bound: lower, confidence: 0.95}
                   - {figure: decision recovery, unseen: tray, least: 0.85, bound: lower, confidence: 0.95}
             release: by hand
+            signing: {unsigned: allowed}
             """;
 
     private SamplePlantFile() {}

@@ -5,7 +5,9 @@ public enum Action {
     /** Puts a model in service. */
     RELEASE("release"),
     /** Puts the model that was in service before the current one back. */
-    REVERT("revert");
+    REVERT("revert"),
+    /** Takes a model out of service for good, and puts back what ran before it wherever it was in service. */
+    WITHDRAW("withdraw");
 
     private final String label;
 

@@ -3,11 +3,10 @@ package turnstone.shelf;
 import com.fasterxml.jackson.databind.JsonNode;
 import java.time.Clock;
 import java.time.Instant;
-import java.time.temporal.ChronoUnit;
-import java.util.ArrayDeque;
-import java.util.Deque;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.function.Function;
 import turnstone.fault.Fault;
 import turnstone.json.Json;
 import turnstone.store.Journal;
@@ -31,11 +30,13 @@ public final class Shelf {
     private final ModelReader reader;
     private final Journal journal;
     private final Catalogue catalogue;
+    private final SigningRule rule;
 
-    private Shelf(Store store, Clock clock, ModelReader reader) {
+    private Shelf(Store store, Clock clock, ModelReader reader, SigningRule rule) {
         this.store = store;
         this.clock = clock;
         this.reader = reader;
+        this.rule = rule;
         this.journal = Journal.in(store, JOURNAL);
         this.catalogue = new Catalogue(store);
     }
@@ -47,7 +48,17 @@ public final class Shelf {
      * @param reader what knows the form of models
      */
     public static Shelf open(Store store, Clock clock, ModelReader reader) {
-        return new Shelf(store, clock, reader);
+        return new Shelf(store, clock, reader, SigningRule.NONE);
+    }
+
+    /** The same shelf, where changes have to follow a rule about signatures. */
+    public Shelf withRule(SigningRule signing) {
+        return new Shelf(store, clock, reader, signing);
+    }
+
+    /** The rule about signatures. */
+    public SigningRule rule() {
+        return rule;
     }
 
     /** Where it is, for messages. */
@@ -107,77 +118,107 @@ public final class Shelf {
         return parsed(journal.entries());
     }
 
-    /** The change that put into service what is in service now, or empty where nothing ever was. */
+    /** The change that put the fleet's model in service, or empty where nothing ever was; single sorters may run another. */
     public Optional<ShelfEntry> inService() {
-        return last(history());
+        return inService(history());
     }
 
-    /** The change that put into service what was in service then, or empty where nothing was. */
+    /** The change that put the model in service that this sorter runs, or empty where nothing ever was. */
+    public Optional<ShelfEntry> inService(String sorter) {
+        return since(history(), service -> service.on(sorter));
+    }
+
+    /** Which model runs where, or empty where nothing was ever in service. */
+    public Optional<Service> running() {
+        return running(history());
+    }
+
+    /** Which model ran where then, or empty where nothing did. */
+    public Optional<Service> runningAsOf(Instant instant) {
+        return running(until(instant));
+    }
+
+    /** The change that put into service what the fleet ran then, or empty where nothing was. */
     public Optional<ShelfEntry> asOf(Instant instant) {
-        return last(
-                history().stream().filter(entry -> !entry.at().isAfter(instant)).toList());
+        return inService(until(instant));
+    }
+
+    /** The withdrawn models by fingerprint, each with the change that withdrew it. */
+    public Map<String, ShelfEntry> withdrawn() {
+        return ServiceSteps.of(history()).withdrawn();
+    }
+
+    /** The signatures that a model was released with, in order. */
+    public List<ModelSignature> signatures(String fingerprint) {
+        return Signatures.of(history(), fingerprint);
     }
 
     /**
      * Puts a model in service.
      *
-     * @param fingerprintPrefix first digits of a model on the shelf
-     * @param verdict what the change rests on, or empty where it is made by hand
-     * @throws Fault of kind input where there is no such model or it is in service already; of kind busy where somebody else made a change
-     *     at the same time
+     * @throws Fault of kind input where there is no such model, it is in service already, was withdrawn, or is not signed where it must be;
+     *     of kind busy where somebody else made a change at the same time
      */
-    public ShelfEntry release(String fingerprintPrefix, Optional<VerdictReference> verdict, String reason, String by) {
-        return release(fingerprintPrefix, verdict, reason, by, journal.entries());
+    public ShelfEntry release(Release wish) {
+        List<JournalEntry> seen = journal.entries();
+        if (wish.lastEntry().isPresent()) {
+            long last = wish.lastEntry().getAsLong();
+            if (seen.size() < last) {
+                throw new IllegalArgumentException("entry " + last + " of " + seen.size());
+            }
+            if (seen.size() > last) {
+                throw lost(last + 1);
+            }
+        }
+        String to = known(wish.model());
+        read(to);
+        return append(seen, changes(seen).release(wish, to));
     }
 
     /**
-     * Puts a model in service if nothing has changed since the decision was prepared.
+     * Puts a model in service on the whole fleet, unsigned.
+     *
+     * @param fingerprintPrefix first digits of a model on the shelf
+     * @param verdict what the change rests on, or empty where it is made by hand
+     * @throws Fault as {@link #release(Release)}
+     */
+    public ShelfEntry release(String fingerprintPrefix, Optional<VerdictReference> verdict, String reason, String by) {
+        return release(Release.of(fingerprintPrefix, reason, by).withVerdict(verdict));
+    }
+
+    /**
+     * Puts a model in service on the whole fleet, unsigned, if nothing has changed since the decision was prepared.
      *
      * @param lastEntry number of the newest entry that the decision rests on, 0 where there was none
-     * @throws Fault as {@link #release(String, Optional, String, String)}, and of kind busy where there is a newer entry
+     * @throws Fault as {@link #release(Release)}, and of kind busy where there is a newer entry
      */
     public ShelfEntry releaseAfter(
             long lastEntry, String fingerprintPrefix, Optional<VerdictReference> verdict, String reason, String by) {
-        List<JournalEntry> seen = journal.entries();
-        if (seen.size() < lastEntry) {
-            throw new IllegalArgumentException("entry " + lastEntry + " of " + seen.size());
-        }
-        if (seen.size() > lastEntry) {
-            throw lost(lastEntry + 1);
-        }
-        return release(fingerprintPrefix, verdict, reason, by, seen);
+        return release(
+                Release.of(fingerprintPrefix, reason, by).withVerdict(verdict).withLastEntry(lastEntry));
     }
 
     /**
-     * Puts back the model that was in service before the current one. A release goes one step on, a revert one step back: after releases of
-     * A, B, C two reverts lead to A, and a third is refused.
+     * Puts back what was in service before the current step. A release goes one step on, a revert one step back: after releases of A, B, C
+     * two reverts lead to A, and a third is refused. Withdrawn models are passed over.
      *
      * @throws Fault of kind input where there is nothing to go back to; of kind busy where somebody else made a change at the same time
      */
     public ShelfEntry revert(String reason, String by) {
         List<JournalEntry> seen = journal.entries();
-        List<ShelfEntry> history = parsed(seen);
-        Deque<String> steps = steps(history);
-        if (steps.size() < 2) {
-            throw Fault.input("there is no earlier model to go back to")
-                    .at(describe())
-                    .found(steps.isEmpty() ? "nothing in service" : "only model " + steps.peek())
-                    .remedy("release another model");
-        }
-        String from = steps.pop();
-        String to = steps.peek();
-        read(to);
-        return append(
-                seen,
-                new ShelfEntry(
-                        seen.size() + 1L,
-                        now(history),
-                        by,
-                        Action.REVERT,
-                        Optional.of(from),
-                        to,
-                        Optional.empty(),
-                        reason));
+        return append(seen, readable(changes(seen).revert(reason, by)));
+    }
+
+    /**
+     * Withdraws a model: it can't be released again without saying so, and a revert passes over it. Wherever it is in service, the same
+     * entry puts back what ran there before.
+     *
+     * @throws Fault of kind input where there is no such model, it is withdrawn already, or it is in service with nothing to put back; of
+     *     kind busy where somebody else made a change at the same time
+     */
+    public ShelfEntry withdraw(String fingerprintPrefix, String reason, String by) {
+        List<JournalEntry> seen = journal.entries();
+        return append(seen, readable(changes(seen).withdraw(known(fingerprintPrefix), reason, by)));
     }
 
     /** Reads everything again and names each file that is missing or not what was written. */
@@ -185,25 +226,22 @@ public final class Shelf {
         return new ShelfCheck(store, journal, catalogue, reader).problems();
     }
 
-    private ShelfEntry release(
-            String fingerprintPrefix,
-            Optional<VerdictReference> verdict,
-            String reason,
-            String by,
-            List<JournalEntry> seen) {
-        String to = fingerprint(fingerprintPrefix)
+    private ShelfChanges changes(List<JournalEntry> seen) {
+        return new ShelfChanges(describe(), parsed(seen), rule, clock);
+    }
+
+    private String known(String fingerprintPrefix) {
+        return fingerprint(fingerprintPrefix)
                 .orElseThrow(() -> Fault.input("no such model on the shelf")
                         .at(describe())
                         .found(fingerprintPrefix)
                         .remedy("put the model on the shelf first"));
-        read(to);
-        List<ShelfEntry> history = parsed(seen);
-        Optional<String> from = last(history).map(ShelfEntry::to);
-        if (from.isPresent() && from.get().equals(to)) {
-            throw Fault.input("this model is in service already").at(describe()).found(to);
-        }
-        return append(
-                seen, new ShelfEntry(seen.size() + 1L, now(history), by, Action.RELEASE, from, to, verdict, reason));
+    }
+
+    /** Makes sure that what is to be put back is what was written. */
+    private ShelfEntry readable(ShelfEntry entry) {
+        entry.after().models().forEach(this::read);
+        return entry;
     }
 
     private ShelfEntry append(List<JournalEntry> seen, ShelfEntry entry) {
@@ -222,28 +260,6 @@ public final class Shelf {
                 .remedy("look at what is in service now, then decide again");
     }
 
-    /** Models in service one after the other, reverts taken back: the newest on top. */
-    private static Deque<String> steps(List<ShelfEntry> history) {
-        Deque<String> steps = new ArrayDeque<>();
-        for (ShelfEntry entry : history) {
-            if (entry.action() == Action.REVERT) {
-                steps.pop();
-            } else {
-                steps.push(entry.to());
-            }
-        }
-        return steps;
-    }
-
-    /** Clocks of two machines may disagree: no entry is older than the one before it. */
-    private Instant now(List<ShelfEntry> history) {
-        Instant now = clock.instant().truncatedTo(ChronoUnit.MILLIS);
-        return last(history)
-                .map(ShelfEntry::at)
-                .filter(before -> before.isAfter(now))
-                .orElse(now);
-    }
-
     private JsonNode read(String fingerprint) {
         return ShelfCheck.model(store, reader, fingerprint);
     }
@@ -254,7 +270,30 @@ public final class Shelf {
                 .toList();
     }
 
-    private static Optional<ShelfEntry> last(List<ShelfEntry> entries) {
-        return entries.isEmpty() ? Optional.empty() : Optional.of(entries.get(entries.size() - 1));
+    private List<ShelfEntry> until(Instant instant) {
+        return history().stream().filter(entry -> !entry.at().isAfter(instant)).toList();
+    }
+
+    private static Optional<Service> running(List<ShelfEntry> entries) {
+        return entries.isEmpty()
+                ? Optional.empty()
+                : Optional.of(entries.get(entries.size() - 1).after());
+    }
+
+    private static Optional<ShelfEntry> inService(List<ShelfEntry> entries) {
+        return since(entries, Service::fleet);
+    }
+
+    /** Of the newest entries that leave the same model there, the oldest: the change that put it there. */
+    private static Optional<ShelfEntry> since(List<ShelfEntry> entries, Function<Service, String> there) {
+        ShelfEntry found = null;
+        for (int i = entries.size() - 1; i >= 0; i--) {
+            ShelfEntry entry = entries.get(i);
+            if (found != null && !there.apply(entry.after()).equals(there.apply(found.after()))) {
+                break;
+            }
+            found = entry;
+        }
+        return Optional.ofNullable(found);
     }
 }

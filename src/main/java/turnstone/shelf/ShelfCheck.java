@@ -40,8 +40,8 @@ final class ShelfCheck {
         SortedMap<String, Optional<Written>> models = new TreeMap<>();
         changes.entries()
                 .forEach(entry -> parsed(entry).ifPresent(change -> {
-                    change.from().ifPresent(from -> models.put(from, Optional.empty()));
-                    models.put(change.to(), Optional.empty());
+                    change.models().forEach(model -> models.put(model, Optional.empty()));
+                    forged(entry, change).ifPresent(problems::add);
                 }));
         catalogue.models(listed.entries()).forEach((model, written) -> models.put(model, Optional.of(written)));
         models.forEach((model, written) -> flaw(model, written).ifPresent(problems::add));
@@ -80,6 +80,16 @@ final class ShelfCheck {
             problems.add(new Problem(name, Problem.Trouble.ALTERED, "an entry of this shelf", fault.getMessage()));
             return Optional.empty();
         }
+    }
+
+    private Optional<Problem> forged(JournalEntry entry, ShelfEntry change) {
+        return change.signature()
+                .filter(signature -> !signature.holdsFor(change.to()))
+                .map(signature -> new Problem(
+                        journal.name(entry.number()),
+                        Problem.Trouble.ALTERED,
+                        "a signature of model " + change.to() + " by " + signature.key(),
+                        "one that does not hold"));
     }
 
     private Optional<Problem> flaw(String fingerprint, Optional<Written> written) {
