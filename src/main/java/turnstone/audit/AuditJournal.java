@@ -118,7 +118,10 @@ public final class AuditJournal {
         JsonNode node = entry.content();
         String place = store.place(journal.name(entry.number()));
         if (!FORMAT.equals(node.path("format").asText())) {
-            throw Fault.storage("not an audit").at(place).found(node.path("format")).expected(FORMAT);
+            throw Fault.storage("not an audit")
+                    .at(place)
+                    .found(node.path("format"))
+                    .expected(FORMAT);
         }
         if (node.path("version").asInt() > VERSION) {
             throw Fault.storage("written by a newer version of this program")

@@ -6,12 +6,14 @@ import java.util.Collection;
 import java.util.Comparator;
 import java.util.List;
 import java.util.Locale;
+import java.util.Map;
 import java.util.Optional;
 import java.util.stream.Collectors;
 
 /** Predicted against found for one duty, as lines of text. */
 public final class AuditReport {
     private static final int LISTED = 5;
+    private static final int DIGITS = 12;
 
     private final List<Audit> audits;
     private final Collection<String> targets;
@@ -20,7 +22,8 @@ public final class AuditReport {
     private AuditReport(String duty, Collection<String> targets, List<Audit> standing) {
         this.audits = standing.stream()
                 .filter(audit -> audit.found().duty().equals(duty))
-                .sorted(Comparator.comparing((Audit audit) -> audit.found().date()).thenComparing(Audit::number))
+                .sorted(Comparator.comparing((Audit audit) -> audit.found().date())
+                        .thenComparing(Audit::number))
                 .toList();
         this.targets = targets;
     }
@@ -30,11 +33,11 @@ public final class AuditReport {
      *
      * @param duty the duty's name
      * @param targets its materials
-     * @param predicted what the trial said, or empty where it gave no figures
+     * @param predicted what the trial said of each side, by the side's name; empty where it gave no figures
      * @param standing the audits that count, of all duties
      */
     public static List<String> of(
-            String duty, Collection<String> targets, Optional<Predicted> predicted, List<Audit> standing) {
+            String duty, Collection<String> targets, Map<String, Predicted> predicted, List<Audit> standing) {
         AuditReport report = new AuditReport(duty, targets, standing);
         report.predicted(predicted);
         report.found();
@@ -44,16 +47,15 @@ public final class AuditReport {
 
     /** The valves as all standing audits of a duty together found them, or empty where none checked them. */
     static Optional<Valves> valves(List<Audit> audits) {
-        return audits.stream()
-                .flatMap(audit -> audit.found().valves().stream())
-                .reduce(Valves::plus);
+        return audits.stream().flatMap(audit -> audit.found().valves().stream()).reduce(Valves::plus);
     }
 
-    private void predicted(Optional<Predicted> predicted) {
-        lines.add(predicted
-                .map(figures -> "predicted: decision purity " + share(figures.purity()) + ", decision recovery "
-                        + share(figures.recovery()) + " (on trays)")
-                .orElse("predicted: nothing, for the trial gave no figures"));
+    private void predicted(Map<String, Predicted> predicted) {
+        if (predicted.isEmpty()) {
+            lines.add("predicted: nothing, for the trial gave no figures");
+        }
+        predicted.forEach((side, figures) -> lines.add("predicted of " + side + ": decision purity "
+                + share(figures.purity()) + ", decision recovery " + share(figures.recovery()) + " (on trays)"));
     }
 
     private void found() {
@@ -63,18 +65,20 @@ public final class AuditReport {
             return;
         }
         double total_kg = product.stream().mapToDouble(Found::total_kg).sum();
-        double target_kg = product.stream().mapToDouble(found -> found.of_kg(targets)).sum();
+        double target_kg =
+                product.stream().mapToDouble(found -> found.of_kg(targets)).sum();
         lines.add("found: purity " + share(target_kg / total_kg) + " over " + count(product.size()) + ", "
                 + mass(total_kg) + ", " + span(product));
         recovery(product).ifPresent(lines::add);
         for (Found one : product.subList(Math.max(0, product.size() - LISTED), product.size())) {
             lines.add(String.format(
                     Locale.ROOT,
-                    "  %s  %-9s  %9s  %s",
+                    "  %s  %-9s  %9s  %s%s",
                     one.date(),
                     one.method().label(),
                     share(one.of_kg(targets) / one.total_kg()),
-                    mass(one.total_kg())));
+                    mass(one.total_kg()),
+                    one.models().isEmpty() ? "" : "  model " + models(one)));
         }
     }
 
@@ -103,11 +107,12 @@ public final class AuditReport {
                 .sum();
     }
 
-    private void bale(Optional<Predicted> predicted) {
+    private void bale(Map<String, Predicted> predicted) {
         Optional<Valves> valves = valves(audits);
         if (valves.isEmpty()) {
-            lines.add("A bale figure is not given: ejection efficiency and co-ejection have not been measured for this duty"
-                    + " (audit add --valves).");
+            lines.add(
+                    "A bale figure is not given: ejection efficiency and co-ejection have not been measured for this duty"
+                            + " (audit add --valves).");
             return;
         }
         String measured = "ejection efficiency " + share(valves.get().ejectionEfficiency()) + " of "
@@ -117,8 +122,9 @@ public final class AuditReport {
             lines.add("A bale figure is not given: the trial gave no figures. Measured: " + measured + ".");
             return;
         }
-        lines.add("bale purity to expect: " + share(predicted.get().balePurity(valves.get())) + ", with " + measured
-                + " as audited, and the duty's mix in the infeed; a point without an interval.");
+        predicted.forEach((side, figures) -> lines.add("bale purity to expect of " + side + ": "
+                + share(figures.balePurity(valves.get())) + ", with " + measured
+                + " as audited, and the duty's mix in the infeed; a point without an interval."));
     }
 
     private List<Found> weighed(Found.Stream stream) {
@@ -126,6 +132,10 @@ public final class AuditReport {
                 .map(Audit::found)
                 .filter(found -> found.stream() == stream && !found.mass_kg().isEmpty())
                 .collect(Collectors.toList());
+    }
+
+    private static String models(Found found) {
+        return found.models().stream().map(model -> model.substring(0, DIGITS)).collect(Collectors.joining(", "));
     }
 
     private static String count(int audits) {

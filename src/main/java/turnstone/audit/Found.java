@@ -123,7 +123,8 @@ public record Found(
                 .put("stream", stream.label());
         mass_kg.forEach(node.putObject("mass_kg")::put);
         valves.ifPresent(found -> node.set("valves", found.json()));
-        node.putArray("models").addAll(models.stream().map(Json.object()::textNode).toList());
+        node.putArray("models")
+                .addAll(models.stream().map(Json.object()::textNode).toList());
         insteadOf.ifPresent(number -> node.put("insteadOf", number));
         return node.put("note", note);
     }

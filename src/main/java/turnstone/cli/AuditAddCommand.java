@@ -55,16 +55,17 @@ final class AuditAddCommand implements Callable<Integer> {
             description = "when the sampled run was")
     LocalDate date;
 
-    @Option(names = "--duty", paramLabel = "NAME", required = true, description = "the duty, as the plant file names it")
+    @Option(
+            names = "--duty",
+            paramLabel = "NAME",
+            required = true,
+            description = "the duty, as the plant file names it")
     String duty;
 
     @Option(names = "--mass", paramLabel = "MATERIAL=KG,...", description = "kilograms found of each material")
     String mass;
 
-    @Option(
-            names = "--stream",
-            paramLabel = "product|rest",
-            description = "what was weighed (default: product)")
+    @Option(names = "--stream", paramLabel = "product|rest", description = "what was weighed (default: product)")
     Found.Stream stream = Found.Stream.PRODUCT;
 
     @Option(names = "--method", paramLabel = "bale|hand-sort", description = "how it was found (default: bale)")
@@ -110,7 +111,8 @@ final class AuditAddCommand implements Callable<Integer> {
         if (common.json) {
             console.json(AuditLines.json(audit));
         } else {
-            console.say("entered as number " + audit.number() + " of " + Places.audits(file).describe());
+            console.say("entered as number " + audit.number() + " of "
+                    + Places.audits(file).describe());
             AuditLines.lines(audit, named.targets()).forEach(console::say);
         }
         return 0;
@@ -128,10 +130,8 @@ final class AuditAddCommand implements Callable<Integer> {
         return switch (method) {
             case "bale" -> Found.Method.BALE;
             case "hand-sort" -> Found.Method.HAND_SORT;
-            default -> throw Fault.usage("unknown method")
-                    .at("--method")
-                    .found(method)
-                    .expected("bale or hand-sort");
+            default ->
+                throw Fault.usage("unknown method").at("--method").found(method).expected("bale or hand-sort");
         };
     }
 
@@ -148,15 +148,18 @@ final class AuditAddCommand implements Callable<Integer> {
                         .expected(String.join(", ", VALVE_MASSES));
             }
         }
-        return Optional.of(new Valves(
-                masses.get("decided"), masses.get("ejected"), masses.get("left"), masses.get("carried")));
+        return Optional.of(
+                new Valves(masses.get("decided"), masses.get("ejected"), masses.get("left"), masses.get("carried")));
     }
 
     /** What the duty's sorters ran at the end of that day. */
     private SortedSet<String> models(Plant file, Duty named) {
         SortedSet<String> models = new TreeSet<>();
         Places.shelf(file)
-                .runningAsOf(date.plusDays(1).atStartOfDay().toInstant(ZoneOffset.UTC).minusMillis(1))
+                .runningAsOf(date.plusDays(1)
+                        .atStartOfDay()
+                        .toInstant(ZoneOffset.UTC)
+                        .minusMillis(1))
                 .ifPresent(then -> named.sorters().forEach(sorter -> models.add(then.on(sorter))));
         return models;
     }

@@ -10,7 +10,8 @@ import picocli.CommandLine.Spec;
 /** {@code audit}: what bales and hand sorts were found to hold. */
 @Command(
         name = "audit",
-        description = "Enters and lists what bales and hand sorts were found to hold; later verdicts set it against what was predicted.",
+        description =
+                "Enters and lists what bales and hand sorts were found to hold; later verdicts set it against what was predicted.",
         footer = {"", "Example: turnstone audit add --help"})
 final class AuditCommand implements Runnable {
     @Mixin

@@ -31,7 +31,8 @@ final class AuditLines {
             lines.add("      " + masses + ": " + percent(found.of_kg(targets) / found.total_kg()) + " target");
         }
         found.valves()
-                .ifPresent(valves -> lines.add("      ejection efficiency " + percent(valves.ejectionEfficiency()) + " of "
+                .ifPresent(valves -> lines.add("      ejection efficiency " + percent(valves.ejectionEfficiency())
+                        + " of "
                         + kilograms(valves.decided_kg()) + ", co-ejection " + percent(valves.coEjection()) + " of "
                         + kilograms(valves.left_kg())));
         found.insteadOf().ifPresent(number -> lines.add("      instead of entry " + number));

@@ -39,7 +39,9 @@ final class AuditListCommand implements Callable<Integer> {
     @Override
     public Integer call() {
         Plant file = plant.read();
-        List<Audit> audits = (all ? Places.audits(file).all() : Places.audits(file).standing())
+        List<Audit> audits = (all
+                        ? Places.audits(file).all()
+                        : Places.audits(file).standing())
                 .stream()
                         .filter(audit -> duty == null || audit.found().duty().equals(duty))
                         .toList();

@@ -19,7 +19,8 @@ import turnstone.shelf.ShelfEntry;
 /** {@code history}: every change of what is in service, or what ran where at a time. */
 @Command(
         name = "history",
-        description = "Lists every change of what is in service, the newest last; or tells which sorter ran which model then.",
+        description =
+                "Lists every change of what is in service, the newest last; or tells which sorter ran which model then.",
         footer = {
             "",
             "Examples: turnstone history --plant plant.yaml",
@@ -73,14 +74,17 @@ final class HistoryCommand implements Callable<Integer> {
         if (common.json) {
             ObjectNode node = Json.object().put("asOf", asOf.toString());
             ObjectNode sorters = node.putObject("sorters");
-            file.sorters().forEach(sorter -> sorters.put(sorter, then.map(service -> service.on(sorter)).orElse(null)));
+            file.sorters()
+                    .forEach(sorter -> sorters.put(
+                            sorter, then.map(service -> service.on(sorter)).orElse(null)));
             console.json(node);
             return 0;
         }
         console.say("in service at " + asOf);
         int width = file.sorters().stream().mapToInt(String::length).max().orElse(0);
         for (String sorter : file.sorters()) {
-            String model = then.map(service -> ShelfLines.shortened(service.on(sorter))).orElse("nothing");
+            String model = then.map(service -> ShelfLines.shortened(service.on(sorter)))
+                    .orElse("nothing");
             console.say("  " + sorter + " ".repeat(width - sorter.length()) + "  " + model);
         }
         return 0;

@@ -23,7 +23,8 @@ final class Lineage {
     private Lineage() {}
 
     static void print(Console console, CommonOptions common, Model model, Optional<Plant> plant) {
-        Map<String, String> notes = plant.map(file -> notes(Places.ledger(file), model)).orElse(Map.of());
+        Map<String, String> notes =
+                plant.map(file -> notes(Places.ledger(file), model)).orElse(Map.of());
         List<ShelfEntry> entries = plant.map(file -> entries(file, model)).orElse(List.of());
         if (common.json) {
             console.json(json(model, notes, entries));
@@ -41,7 +42,8 @@ final class Lineage {
         Map<String, String> notes = new TreeMap<>();
         for (MadeFrom.Day day : model.madeFrom().days()) {
             List<DayEntry> revisions = ledger.revisions(LocalDate.parse(day.day()));
-            boolean held = revisions.stream().anyMatch(entry -> entry.fingerprint().equals(day.fingerprint()));
+            boolean held =
+                    revisions.stream().anyMatch(entry -> entry.fingerprint().equals(day.fingerprint()));
             int newest = revisions.stream().mapToInt(DayEntry::revision).max().orElse(0);
             String note = "the same";
             if (!held) {

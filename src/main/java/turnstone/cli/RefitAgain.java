@@ -26,7 +26,7 @@ final class RefitAgain {
     static void run(Console console, CommonOptions common, Plant plant, Model model) {
         Ledger ledger = Places.ledger(plant);
         console.talk().phase("make " + Words.shortened(model.fingerprint()) + " again");
-        Model again = Again.make(plant, ledger, model, guide(plant, model));
+        Model again = Again.make(plant.materialNames(), ledger, model, guide(plant, model));
         console.talk().done("made again from " + model.madeFrom().days().size() + " days of " + ledger.describe());
         List<ModelDifferences.Field> fields = ModelDifferences.of(model, again);
         if (common.json) {
@@ -37,7 +37,8 @@ final class RefitAgain {
             console.say("other numbers: stated " + Words.shortened(model.fingerprint()) + ", made again "
                     + Words.shortened(again.fingerprint()));
             for (ModelDifferences.Field field : fields) {
-                console.say("  " + field.name() + ": " + field.differing() + " of " + field.values() + " values differ");
+                console.say(
+                        "  " + field.name() + ": " + field.differing() + " of " + field.values() + " values differ");
                 console.say("    first at " + field.first() + ": stated " + field.stated() + ", made again "
                         + field.again());
             }
@@ -46,7 +47,8 @@ final class RefitAgain {
             throw Fault.input("made again, the model has other numbers")
                     .at("model " + Words.shortened(model.fingerprint()))
                     .found(fields.size() + (fields.size() == 1 ? " field that differs" : " fields that differ"))
-                    .remedy("use the plant file and the version of the program that made it, or refit and try the new one");
+                    .remedy(
+                            "use the plant file and the version of the program that made it, or refit and try the new one");
         }
     }
 

@@ -108,7 +108,8 @@ final class RefitCommand implements Callable<Integer> {
     @Option(
             names = "--again",
             paramLabel = "MODEL",
-            description = "make this model anew from the ledger days that it states, and say whether the numbers are the same")
+            description =
+                    "make this model anew from the ledger days that it states, and say whether the numbers are the same")
     String again;
 
     RefitCommand(Console console) {

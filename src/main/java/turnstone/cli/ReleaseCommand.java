@@ -57,7 +57,9 @@ final class ReleaseCommand implements Callable<Integer> {
             description = "sign the model with this private key (default: the plant file's, if it names one)")
     Path key;
 
-    @Option(names = "--although-withdrawn", description = "release it although it was withdrawn; it is withdrawn no longer")
+    @Option(
+            names = "--although-withdrawn",
+            description = "release it although it was withdrawn; it is withdrawn no longer")
     boolean althoughWithdrawn;
 
     ReleaseCommand(Console console) {
@@ -72,7 +74,8 @@ final class ReleaseCommand implements Callable<Integer> {
                 throw Spelling.unknown("sorter", sorter, file.sorters()).at("--sorters");
             }
         }
-        Optional<SigningKey> signing = (key != null ? Optional.of(key) : file.signing().privateKey()).map(SigningKey::read);
+        Optional<SigningKey> signing =
+                (key != null ? Optional.of(key) : file.signing().privateKey()).map(SigningKey::read);
         Release wish = Release.of(model, why.reason, why.by)
                 .withSorters(sorters.containsAll(file.sorters()) ? Set.of() : sorters)
                 .withKey(signing)

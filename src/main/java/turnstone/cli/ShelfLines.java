@@ -48,7 +48,9 @@ final class ShelfLines {
             change = moves(entry) ? ", put back " + shortened(entry.to()) + where(entry) : ", which was not in service";
         } else {
             change = where(entry)
-                    + entry.from().map(from -> ", instead of " + shortened(from)).orElse("");
+                    + entry.from()
+                            .map(from -> ", instead of " + shortened(from))
+                            .orElse("");
         }
         lines.add(String.format(
                 "%4d  %s  %-8s  %s%s",

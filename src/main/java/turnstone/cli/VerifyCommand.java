@@ -62,7 +62,8 @@ final class VerifyCommand implements Callable<Integer> {
     @Override
     public Integer call() {
         Plant file = plant.read();
-        Optional<PublicKeyFile> checking = (key != null ? Optional.of(key) : file.signing().publicKey()).map(PublicKeyFile::read);
+        Optional<PublicKeyFile> checking =
+                (key != null ? Optional.of(key) : file.signing().publicKey()).map(PublicKeyFile::read);
         if (model != null) {
             return signatures(file, List.of(Models.find(model, plant.file).fingerprint()), checking);
         }
@@ -71,7 +72,10 @@ final class VerifyCommand implements Callable<Integer> {
     }
 
     private static List<String> inService(Plant file) {
-        return Places.shelf(file).running().map(running -> List.copyOf(running.models())).orElse(List.of());
+        return Places.shelf(file)
+                .running()
+                .map(running -> List.copyOf(running.models()))
+                .orElse(List.of());
     }
 
     private int signatures(Plant file, List<String> models, Optional<PublicKeyFile> checking) {
@@ -83,13 +87,15 @@ final class VerifyCommand implements Callable<Integer> {
         for (String fingerprint : models) {
             List<ModelSignature> given = shelf.signatures(fingerprint);
             if (given.stream()
-                    .noneMatch(signature -> signature.key().equals(checking.get()) && signature.holdsFor(fingerprint))) {
+                    .noneMatch(
+                            signature -> signature.key().equals(checking.get()) && signature.holdsFor(fingerprint))) {
                 throw Fault.input("the model is not signed with this key")
                         .at("model " + ShelfLines.shortened(fingerprint))
                         .found(
                                 given.isEmpty()
                                         ? "no signature in the journal of " + shelf.describe()
-                                        : "a signature by " + given.get(given.size() - 1).key())
+                                        : "a signature by "
+                                                + given.get(given.size() - 1).key())
                         .expected("one by " + checking.get())
                         .remedy("don't run it: it is not what was released, or another plant's");
             }

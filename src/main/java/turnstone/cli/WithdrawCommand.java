@@ -14,7 +14,10 @@ import turnstone.shelf.ShelfEntry;
             "Withdraws a model: from then on a release of it is refused unless it says so, and a revert passes over it.",
             "Wherever it is in service, what ran there before is put back in the same step; with nothing to put back it is refused."
         },
-        footer = {"", "Example: turnstone withdraw 3f9c21ab --plant plant.yaml --reason \"made from a mislabelled tray\""})
+        footer = {
+            "",
+            "Example: turnstone withdraw 3f9c21ab --plant plant.yaml --reason \"made from a mislabelled tray\""
+        })
 final class WithdrawCommand implements Callable<Integer> {
     private final Console console;
 

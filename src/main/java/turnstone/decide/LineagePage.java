@@ -43,7 +43,9 @@ public final class LineagePage {
         lines.add("");
         lines.add("Made from " + grouped(from.records()) + " records"
                 + (from.showings() > 0 ? " in " + grouped(from.showings()) + " showings" : "")
-                + (from.days().isEmpty() ? "" : " of " + from.days().size() + (from.days().size() == 1 ? " ledger day" : " ledger days")));
+                + (from.days().isEmpty()
+                        ? ""
+                        : " of " + from.days().size() + (from.days().size() == 1 ? " ledger day" : " ledger days")));
         from.inputs().forEach(input -> lines.add("  " + input));
         if (from.days().isEmpty()) {
             return;
@@ -124,13 +126,20 @@ public final class LineagePage {
     }
 
     private static int width(int first, List<String> materials, Map<String, Map<String, String>> cells) {
-        return 2 + first + materials.stream().mapToInt(material -> 2 + column(material, cells)).sum();
+        return 2
+                + first
+                + materials.stream()
+                        .mapToInt(material -> 2 + column(material, cells))
+                        .sum();
     }
 
     private static int column(String material, Map<String, Map<String, String>> cells) {
         return Math.max(
                 material.length(),
-                cells.get(material).values().stream().mapToInt(String::length).max().orElse(0));
+                cells.get(material).values().stream()
+                        .mapToInt(String::length)
+                        .max()
+                        .orElse(0));
     }
 
     private void block(
@@ -141,7 +150,8 @@ public final class LineagePage {
         for (String instrument : instruments) {
             StringBuilder row = new StringBuilder("  " + instrument + " ".repeat(first - instrument.length()));
             for (String material : materials) {
-                String cell = Optional.ofNullable(cells.get(material).get(instrument)).orElse("-");
+                String cell =
+                        Optional.ofNullable(cells.get(material).get(instrument)).orElse("-");
                 row.append(right(cell, 2 + column(material, cells)));
             }
             lines.add(row.toString());

@@ -199,7 +199,8 @@ public final class Night {
             return Optional.empty();
         }
         if (shelf.running().map(running -> !running.isWhole()).orElse(false)) {
-            progress.remark("not released by the night: single sorters run a model of their own; end the split by hand");
+            progress.remark(
+                    "not released by the night: single sorters run a model of their own; end the split by hand");
             return Optional.empty();
         }
         VerdictReference reference =

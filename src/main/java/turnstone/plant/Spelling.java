@@ -12,8 +12,7 @@ public final class Spelling {
     public static Fault unknown(String kind, String name, List<String> known) {
         String nearest = nearest(name, known);
         String hint = near(name, nearest) ? ", did you mean `" + nearest + "`?" : "";
-        return Fault.usage("unknown " + kind + " `" + name + "`" + hint)
-                .expected("one of " + String.join(", ", known));
+        return Fault.usage("unknown " + kind + " `" + name + "`" + hint).expected("one of " + String.join(", ", known));
     }
 
     /** The word with the least changes of one letter; the first of equals. */

@@ -1,11 +1,11 @@
 package turnstone.refit;
 
 import com.fasterxml.jackson.databind.JsonNode;
+import java.util.List;
 import java.util.Optional;
 import turnstone.decide.Model;
 import turnstone.fault.Fault;
 import turnstone.ledger.Ledger;
-import turnstone.plant.Plant;
 
 /** Makes a model anew from the ledger days, the recipe and the left-out parts that it states, to see whether the same numbers come out. */
 public final class Again {
@@ -14,11 +14,11 @@ public final class Again {
     /**
      * The model, made anew.
      *
-     * @param plant gives the order of the materials; head and count scale are the ledger's
+     * @param materials all the plant's, in order; head and count scale are the ledger's
      * @param guide the model that the axes of {@code model} are oriented to, where it states one
      * @throws Fault of kind input where the model states no recipe, or the ledger does not hold its days as they were
      */
-    public static Model make(Plant plant, Ledger ledger, Model model, Optional<Model> guide) {
+    public static Model make(List<String> materials, Ledger ledger, Model model, Optional<Model> guide) {
         String place = "model " + model.fingerprint();
         JsonNode stated = model.recipe()
                 .orElseThrow(() -> Fault.input("this model was made from a table, not from a ledger")
@@ -29,7 +29,7 @@ public final class Again {
                     place + " is oriented to " + model.orientedTo() + ", not to " + guide.map(Model::fingerprint));
         }
         WindowSums sums = WindowSums.read(ledger, Window.of(ledger, model));
-        return new ModelMaker(plant.materialNames(), ledger.head(), ledger.countScale())
+        return new ModelMaker(materials, ledger.head(), ledger.countScale())
                 .make(Recipe.fromJson(stated, place), sums, HeldOut.fromRecipe(stated), guide)
                 .model();
     }

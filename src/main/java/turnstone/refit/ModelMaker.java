@@ -110,12 +110,7 @@ public final class ModelMaker {
     }
 
     private ModelContext context(
-            Recipe recipe,
-            WindowSums sums,
-            HeldOut heldOut,
-            Set<String> keptWhole,
-            Fit fit,
-            Optional<Model> guide) {
+            Recipe recipe, WindowSums sums, HeldOut heldOut, Set<String> keptWhole, Fit fit, Optional<Model> guide) {
         ObjectNode pretreatment = Json.object();
         pretreatment.set("head", head.json());
         pretreatment.set("tail", recipe.tail().json());
