@@ -4,6 +4,7 @@ import java.util.ArrayList;
 import java.util.List;
 import turnstone.ledger.PostOutcome;
 import turnstone.night.Night;
+import turnstone.night.VerdictRemarks;
 import turnstone.night.Words;
 import turnstone.plant.Plant;
 import turnstone.trial.Decision;
@@ -35,6 +36,7 @@ final class NightPage {
                 + " axes, ridge " + Figures.shortest(result.candidate().ridge()));
         lines.add("");
         lines.addAll(result.verdict().text().lines().toList());
+        lines.addAll(VerdictRemarks.of(plant, result.verdict()));
         lines.add("");
         lines.addAll(plant.cautions());
         lines.add("files of this run: " + result.run().path());

@@ -19,6 +19,7 @@ import turnstone.night.RefitStep;
 import turnstone.night.RunFolder;
 import turnstone.night.TrialFiles;
 import turnstone.night.TrialStep;
+import turnstone.night.VerdictRemarks;
 import turnstone.plant.Plant;
 import turnstone.refit.Recipe;
 import turnstone.shelf.Shelf;
@@ -81,12 +82,13 @@ final class TrialCommand implements Callable<Integer> {
                     TrialStep.run(file, ledger, found, new TrialStep.Contest(recipe, model, inService), console.talk());
             RunFolder run = RunFolder.next(Places.runs(file), day);
             TrialFiles.write(run, tried.result());
-            run.write("verdict.txt", tried.verdict().text());
+            String page = VerdictRemarks.page(file, tried.verdict());
+            run.write("verdict.txt", page);
             run.write("verdict.json", tried.verdict().json());
             if (common.json) {
                 console.json(tried.verdict().json());
             } else {
-                console.say(tried.verdict().text());
+                console.say(page);
                 console.say("files of this run: " + run.path());
                 console.say("verdict: " + tried.verdict().decision().label());
             }

@@ -108,7 +108,7 @@ public final class Night {
 
         TrialFiles.write(run, tried.result());
         Verdict verdict = tried.verdict();
-        run.write("verdict.txt", verdict.text());
+        run.write("verdict.txt", VerdictRemarks.page(plant, verdict));
         run.write("run.json", record.ended());
         byte[] content = Json.pretty(verdict.json());
         run.write("verdict.json", new String(content, StandardCharsets.UTF_8));

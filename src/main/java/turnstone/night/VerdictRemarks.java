@@ -68,8 +68,8 @@ public final class VerdictRemarks {
                         sorters.computeIfAbsent(model, key -> new ArrayList<>()).add(sorter));
         lines.add("");
         lines.add("Sorters with a model of their own");
-        sorters.forEach((model, named) ->
-                wrap(lines, "  ", String.join(", ", named) + ": model " + Words.shortened(model)));
+        sorters.forEach(
+                (model, named) -> wrap(lines, "  ", String.join(", ", named) + ": model " + Words.shortened(model)));
         wrap(
                 lines,
                 "  ",

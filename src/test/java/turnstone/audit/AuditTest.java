@@ -115,7 +115,9 @@ class AuditTest {
         };
         AuditJournal ours = AuditJournal.in(raced, CLOCK);
         assertRefused(Fault.Kind.BUSY, () -> ours.add(bale(2, 2), "loser"), "same time");
-        assertThat(ours.all()).singleElement().satisfies(audit -> assertThat(audit.by()).isEqualTo("winner"));
+        assertThat(ours.all())
+                .singleElement()
+                .satisfies(audit -> assertThat(audit.by()).isEqualTo("winner"));
     }
 
     @Test
@@ -156,8 +158,22 @@ class AuditTest {
         Map<String, Predicted> predicted = new LinkedHashMap<>();
         predicted.put("candidate", new Predicted(0.9, 0.9, 0.6, Predicted.Product.EJECTED));
         journal.add(bale(90, 10), "x");
-        journal.add(found(DATE.plusDays(1), Found.Stream.PRODUCT, Map.of("PET bottle", 300.0), Optional.empty(), OptionalLong.empty()), "x");
-        journal.add(found(DATE, Found.Stream.REST, Map.of("PET bottle", 10.0, "PP", 90.0), Optional.empty(), OptionalLong.empty()), "x");
+        journal.add(
+                found(
+                        DATE.plusDays(1),
+                        Found.Stream.PRODUCT,
+                        Map.of("PET bottle", 300.0),
+                        Optional.empty(),
+                        OptionalLong.empty()),
+                "x");
+        journal.add(
+                found(
+                        DATE,
+                        Found.Stream.REST,
+                        Map.of("PET bottle", 10.0, "PP", 90.0),
+                        Optional.empty(),
+                        OptionalLong.empty()),
+                "x");
         List<String> without = AuditReport.of(DUTY, List.of("PET bottle"), predicted, journal.standing());
         // 390 of 400 kg; both streams on the first date only: 90 of 100 kg.
         assertThat(without)

@@ -45,6 +45,7 @@ class ShelfCommandsTest {
                 targets: [PET bottle]
                 productStream: ejected
                 infeedMix: {PET bottle: 0.6, PP: 0.4}
+                requirements: [{figure: decision purity, least: 0.9}]
             """;
 
     @TempDir
@@ -66,13 +67,21 @@ class ShelfCommandsTest {
     }
 
     private int run(String... arguments) {
-        ByteArrayOutputStream output = new ByteArrayOutputStream();
-        ByteArrayOutputStream errors = new ByteArrayOutputStream();
         String[] all = Arrays.copyOf(arguments, arguments.length + 2);
         all[arguments.length] = "--plant";
         all[arguments.length + 1] = plantFile().toString();
+        return runAsIs(all);
+    }
+
+    private void makeKey(String file) {
+        assertThat(runAsIs("key", "--out", file)).as(() -> err).isZero();
+    }
+
+    private int runAsIs(String... arguments) {
+        ByteArrayOutputStream output = new ByteArrayOutputStream();
+        ByteArrayOutputStream errors = new ByteArrayOutputStream();
         int code = Main.run(
-                all,
+                arguments,
                 new PrintStream(output, true, StandardCharsets.UTF_8),
                 new PrintStream(errors, true, StandardCharsets.UTF_8));
         out = output.toString(StandardCharsets.UTF_8);
@@ -141,8 +150,8 @@ class ShelfCommandsTest {
         String b = refit("1e-2");
         String ours = folder.resolve("ours").toString();
         String theirs = folder.resolve("theirs").toString();
-        assertThat(Main.run(new String[] {"key", "--out", ours}, System.out, System.err)).isZero();
-        assertThat(Main.run(new String[] {"key", "--out", theirs}, System.out, System.err)).isZero();
+        makeKey(ours);
+        makeKey(theirs);
         release(a, "--key", ours);
         assertThat(run("verify", "--key", ours + ".public")).as(err).isZero();
         assertThat(out).contains("model " + a + " is signed by key ");
@@ -154,7 +163,9 @@ class ShelfCommandsTest {
         assertThat(run("verify", a, "--key", ours + ".public")).isZero();
         Path copy = folder.resolve("board.json");
         Files.writeString(copy, run("show", a, "--json") == 0 ? out : "");
-        assertThat(run("verify", copy.toString(), "--key", ours + ".public")).as(err).isZero();
+        assertThat(run("verify", copy.toString(), "--key", ours + ".public"))
+                .as(err)
+                .isZero();
         Files.writeString(copy, out(copy).replaceFirst("\"ridge\" ?: ?0.001", "\"ridge\" : 0.002"));
         assertThat(run("verify", copy.toString(), "--key", ours + ".public")).isEqualTo(4);
         assertThat(err).contains("altered");
@@ -168,7 +179,7 @@ class ShelfCommandsTest {
     void aPlantThatRefusesUnsignedModelsSaysHowToSign() throws IOException {
         String a = refit("1e-3");
         Path key = folder.resolve("shore");
-        assertThat(Main.run(new String[] {"key", "--out", key.toString()}, System.out, System.err)).isZero();
+        makeKey(key.toString());
         Files.writeString(plantFile(), PLANT + "signing: {unsigned: refused, publicKey: shore.public}\n");
         assertThat(run("release", a, "--reason", "r")).isEqualTo(3);
         assertThat(err).contains("--key");
@@ -207,16 +218,20 @@ class ShelfCommandsTest {
 
     @Test
     void anAuditIsEnteredAndListed() {
-        String[] add = {"audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PET bottle=97.5,PP=2.5"};
+        String[] add = {"audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PET bottle=97.5,PP=2.5"
+        };
         assertThat(run(add)).as(err).isZero();
         assertThat(out).contains("97.50 % target");
         assertThat(run(add)).isEqualTo(3);
         assertThat(run("audit", "list")).isZero();
         assertThat(out).contains("2026-03-14  bale, product of bottles");
-        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "botles", "--mass", "PP=1")).isEqualTo(2);
+        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "botles", "--mass", "PP=1"))
+                .isEqualTo(2);
         assertThat(err).contains("did you mean `bottles`");
-        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PVC=1")).isEqualTo(2);
-        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PP=-1")).isEqualTo(2);
+        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PVC=1"))
+                .isEqualTo(2);
+        assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PP=-1"))
+                .isEqualTo(2);
         assertThat(run("audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--valves", "decided=1"))
                 .isEqualTo(2);
         assertThat(run("verify")).as(err).isZero();

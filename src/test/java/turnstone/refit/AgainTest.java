@@ -42,13 +42,7 @@ class AgainTest {
 
     private static Recipe recipe(OptionalDouble ridge) {
         return new Recipe(
-                28,
-                new Balance(Weighting.EQUAL, Weighting.EQUAL),
-                ridge,
-                TailSpec.none(),
-                0,
-                new Prior.Equal(),
-                0.01);
+                28, new Balance(Weighting.EQUAL, Weighting.EQUAL), ridge, TailSpec.none(), 0, new Prior.Equal(), 0.01);
     }
 
     private Model made(OptionalDouble ridge, HeldOut heldOut, Optional<Model> guide) {
@@ -122,8 +116,11 @@ class AgainTest {
         ModelMaker.Made made = new ModelMaker(MATERIALS, oneGroup.head(), oneGroup.countScale())
                 .make(recipe(OptionalDouble.of(1e-3)), sums, all);
         assertThat(made.keptWhole()).containsExactlyElementsOf(MATERIALS);
-        long records = sums.records().values().stream().mapToLong(Long::longValue).sum();
-        assertThat(made.model().madeFrom().parts().stream().mapToLong(MadeFrom.Part::records).sum())
+        long records =
+                sums.records().values().stream().mapToLong(Long::longValue).sum();
+        assertThat(made.model().madeFrom().parts().stream()
+                        .mapToLong(MadeFrom.Part::records)
+                        .sum())
                 .isEqualTo(records);
     }
 }

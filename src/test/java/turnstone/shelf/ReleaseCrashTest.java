@@ -121,7 +121,9 @@ class ReleaseCrashTest {
                     assertThat(found.running()).contains(after);
                     break;
                 }
-                assertThat(found.running().orElseThrow()).as("step %s %s", step, when).isIn(before, after);
+                assertThat(found.running().orElseThrow())
+                        .as("step %s %s", step, when)
+                        .isIn(before, after);
                 // And it can be told and gone on from.
                 if (found.running().orElseThrow().equals(before)) {
                     change.accept(found);

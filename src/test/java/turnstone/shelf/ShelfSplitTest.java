@@ -93,12 +93,14 @@ class ShelfSplitTest {
         release(b, "avocet");
         release(c);
         assertThat(shelf.runningAsOf(NIGHT)).isEmpty();
-        assertThat(shelf.runningAsOf(NIGHT.plusSeconds(60)).orElseThrow().on("avocet")).isEqualTo(a);
+        assertThat(shelf.runningAsOf(NIGHT.plusSeconds(60)).orElseThrow().on("avocet"))
+                .isEqualTo(a);
         Service split = shelf.runningAsOf(NIGHT.plusSeconds(179)).orElseThrow();
         assertThat(split.on("avocet")).isEqualTo(b);
         assertThat(split.on("dunlin")).isEqualTo(a);
         assertThat(shelf.asOf(NIGHT.plusSeconds(179)).orElseThrow().to()).isEqualTo(a);
-        assertThat(shelf.runningAsOf(NIGHT.plusSeconds(180)).orElseThrow().on("avocet")).isEqualTo(c);
+        assertThat(shelf.runningAsOf(NIGHT.plusSeconds(180)).orElseThrow().on("avocet"))
+                .isEqualTo(c);
     }
 
     @Test

@@ -52,8 +52,7 @@ class SignatureTest {
     @Test
     void keysOfTheStandardsFormAreRead() throws IOException {
         Path file = folder.resolve("published");
-        Files.createFile(
-                file, PosixFilePermissions.asFileAttribute(PosixFilePermissions.fromString("rw-------")));
+        Files.createFile(file, PosixFilePermissions.asFileAttribute(PosixFilePermissions.fromString("rw-------")));
         Files.writeString(file, PUBLISHED_PRIVATE + PUBLISHED_PUBLIC);
         Path open = Files.writeString(folder.resolve("published.public"), PUBLISHED_PUBLIC);
         SigningKey key = SigningKey.read(file);
@@ -67,7 +66,8 @@ class SignatureTest {
     void aPrivateKeyIsForItsOwnerOnlyAndIsNeverReplaced() throws IOException {
         Path file = folder.resolve("shore");
         assertThat(SigningKey.make(file)).isEqualTo(folder.resolve("shore.public"));
-        assertThat(PosixFilePermissions.toString(Files.getPosixFilePermissions(file))).isEqualTo("rw-------");
+        assertThat(PosixFilePermissions.toString(Files.getPosixFilePermissions(file)))
+                .isEqualTo("rw-------");
         assertThat(Files.readString(folder.resolve("shore.public"))).doesNotContain("PRIVATE");
         byte[] before = Files.readAllBytes(file);
         assertRefused(Fault.Kind.INPUT, () -> SigningKey.make(file), "never replaced");
@@ -85,8 +85,7 @@ class SignatureTest {
         Files.setPosixFilePermissions(file, PosixFilePermissions.fromString(permissions));
         assertRefused(Fault.Kind.USAGE, () -> SigningKey.read(file), permissions);
         Files.setPosixFilePermissions(file, PosixFilePermissions.fromString("r--------"));
-        assertThat(SigningKey.read(file).publicKey())
-                .isEqualTo(PublicKeyFile.read(folder.resolve("shore.public")));
+        assertThat(SigningKey.read(file).publicKey()).isEqualTo(PublicKeyFile.read(folder.resolve("shore.public")));
     }
 
     @Test
@@ -104,11 +103,13 @@ class SignatureTest {
         ModelSignature signature = ours.sign(a);
         assertThat(signature.holdsFor(a)).isTrue();
         assertThat(signature.holdsFor(model(2).path("fingerprint").asText())).isFalse();
-        assertThat(new ModelSignature(key("theirs").publicKey(), signature.value()).holdsFor(a)).isFalse();
+        assertThat(new ModelSignature(key("theirs").publicKey(), signature.value()).holdsFor(a))
+                .isFalse();
         char first = signature.value().charAt(0);
         String altered = (first == 'A' ? 'B' : 'A') + signature.value().substring(1);
         assertThat(new ModelSignature(ours.publicKey(), altered).holdsFor(a)).isFalse();
-        assertThat(new ModelSignature(ours.publicKey(), "no Base64 !").holdsFor(a)).isFalse();
+        assertThat(new ModelSignature(ours.publicKey(), "no Base64 !").holdsFor(a))
+                .isFalse();
     }
 
     @Test
