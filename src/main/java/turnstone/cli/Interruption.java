@@ -7,7 +7,7 @@ import java.io.PrintStream;
  * user's trouble: {@link #isUnderWay} lets it be passed over.
  */
 final class Interruption {
-    static final String LINE = "turnstone: interrupted; nothing was published after this point, run it again";
+    static final String LINE = "turnstone: interrupted; nothing is half published, run it again";
 
     private final Thread hook;
 

@@ -12,12 +12,16 @@ import java.io.UncheckedIOException;
 import java.util.ArrayList;
 import java.util.Comparator;
 import java.util.List;
+import java.util.Set;
+import java.util.stream.Collectors;
 import turnstone.fault.Fault;
 import turnstone.json.Json;
 
 /** The form of a plant file: JSON Schema 2020-12 in {@code plant.schema.json}. */
 final class PlantSchema {
     private static final String RESOURCE = "plant.schema.json";
+    private static final String UNKNOWN = "additionalProperties";
+    private static final String MISSING = "required";
 
     private final JsonNode form;
     private final Schema schema;
@@ -43,6 +47,12 @@ final class PlantSchema {
     void check(PlantText text) {
         JsonNode root = text.root().node();
         List<Error> errors = new ArrayList<>(schema.validate(root));
+        // A key that is missing where another is unknown is most likely the misspelt one.
+        Set<String> misspelt = errors.stream()
+                .filter(error -> error.getKeyword().equals(UNKNOWN))
+                .map(PlantSchema::pointer)
+                .collect(Collectors.toSet());
+        errors.removeIf(error -> error.getKeyword().equals(MISSING) && misspelt.contains(pointer(error)));
         errors.sort(Comparator.comparingInt((Error error) -> text.line(place(error))));
         if (!errors.isEmpty()) {
             throw fault(errors.get(0), text);
@@ -61,7 +71,7 @@ final class PlantSchema {
 
     /** Where the reader should look: the unknown key itself, else the value. */
     private static String place(Error error) {
-        return error.getKeyword().equals("additionalProperties")
+        return error.getKeyword().equals(UNKNOWN)
                 ? pointer(error) + "/" + PlantText.escaped(error.getProperty())
                 : pointer(error);
     }
@@ -71,9 +81,8 @@ final class PlantSchema {
         String place = text.place(place(error));
         JsonNode holder = form.at(JsonPointer.compile(fragment(error)).head());
         return switch (error.getKeyword()) {
-            case "additionalProperties" ->
-                unknownKey(error.getProperty(), holder).at(place);
-            case "required" ->
+            case UNKNOWN -> unknownKey(error.getProperty(), holder).at(place);
+            case MISSING ->
                 Fault.usage("key `" + error.getProperty() + "` is missing").at(place);
             default -> wrongValue(error, holder).at(place).found(shown(value));
         };
