@@ -2,6 +2,8 @@ package turnstone.night;
 
 import com.fasterxml.jackson.databind.node.ArrayNode;
 import com.fasterxml.jackson.databind.node.ObjectNode;
+import java.util.Map;
+import java.util.TreeMap;
 import turnstone.json.Json;
 import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
@@ -32,10 +34,8 @@ public final class TrialFiles {
                 .put("inService", trial.inService().orElse(null));
         ArrayNode days = node.putArray("days");
         trial.days().forEach(day -> days.add(day.toString()));
-        ObjectNode notTried = node.putObject("notTried");
-        trial.notTried().entrySet().stream()
-                .sorted(java.util.Map.Entry.comparingByKey())
-                .forEach(entry -> notTried.put(entry.getKey(), entry.getValue()));
+        reasons(node.putObject("notTried"), trial.notTried(TrialForm.THIS_FLEET));
+        reasons(node.putObject("notTriedOnMachineNotSeen"), trial.notTried(TrialForm.MACHINE_NOT_SEEN));
         ObjectNode forms = node.putObject("forms");
         for (TrialForm form : TrialForm.values()) {
             ObjectNode sides = forms.putObject(form.label());
@@ -44,5 +44,9 @@ public final class TrialFiles {
             }
         }
         return node;
+    }
+
+    private static void reasons(ObjectNode node, Map<String, String> notTried) {
+        new TreeMap<>(notTried).forEach(node::put);
     }
 }

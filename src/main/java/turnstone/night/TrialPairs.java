@@ -42,10 +42,12 @@ final class TrialPairs {
 
     private final TrialModels models;
     private final SortedSet<String> seenWhole;
+    private final SortedSet<String> oneMachineOnly;
 
-    private TrialPairs(TrialModels models, SortedSet<String> seenWhole) {
+    private TrialPairs(TrialModels models, SortedSet<String> seenWhole, SortedSet<String> oneMachineOnly) {
         this.models = models;
         this.seenWhole = seenWhole;
+        this.oneMachineOnly = oneMachineOnly;
     }
 
     /** The pairs that judge these showings. */
@@ -65,16 +67,19 @@ final class TrialPairs {
                         TreeMap::new));
         TrialModels.Builder builder = TrialModels.builder();
         SortedSet<String> seenWhole = new TreeSet<>();
+        SortedSet<String> oneMachineOnly = new TreeSet<>();
         made.forEach((seat, pair) -> {
             if (seat.instrument().isEmpty()) {
                 seenWhole.addAll(pair.seenWhole());
                 builder.thisFleet(seat.trayGroup(), pair.candidate(), pair.inService(), pair.seenWhole());
             } else {
+                oneMachineOnly.addAll(pair.seenWhole());
                 builder.machineNotSeen(
                         seat.trayGroup(), seat.instrument(), pair.candidate(), pair.inService(), pair.seenWhole());
             }
         });
-        return new TrialPairs(builder.build(), seenWhole);
+        oneMachineOnly.removeAll(seenWhole);
+        return new TrialPairs(builder.build(), seenWhole, oneMachineOnly);
     }
 
     private static Made pair(ModelMaker maker, Maker candidate, Optional<Maker> inService, HeldOut heldOut) {
@@ -93,5 +98,10 @@ final class TrialPairs {
     /** Materials whose trays all lie in one group of those held out: they can't be tried. */
     SortedSet<String> seenWhole() {
         return seenWhole;
+    }
+
+    /** Materials of which nothing is left without one of the machines and a group: they can't be tried on a machine not seen. */
+    SortedSet<String> oneMachineOnly() {
+        return oneMachineOnly;
     }
 }

@@ -68,6 +68,7 @@ public final class TrialStep {
         progress.phase("re-make both sides without each tray group and machine");
         TrialPairs pairs = pairs(plant, ledger, before, contest, showings);
         pairs.seenWhole().forEach(result::oneGroupOnly);
+        pairs.oneMachineOnly().forEach(result::oneMachineOnly);
         progress.done("re-made " + Words.number(pairs.models().size()) + " pairs of models");
         progress.phase("trial of " + day.day(), day.source().rows());
         TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), QUARANTINE_KEPT);

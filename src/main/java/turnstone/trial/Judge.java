@@ -72,7 +72,7 @@ public final class Judge {
         String bound = requirement.bound() == Requirement.Bound.POINT ? "point" : lowerEnd(requirement.confidence());
         TrialForm form =
                 requirement.unseen() == Requirement.Unseen.TRAY ? TrialForm.THIS_FLEET : TrialForm.MACHINE_NOT_SEEN;
-        Optional<String> obstacle = obstacle(duty);
+        Optional<String> obstacle = obstacle(duty, form);
         Optional<TrialTally> tally = trial.tally(form, Side.CANDIDATE);
         if (obstacle.isPresent() || tally.isEmpty()) {
             String why = obstacle.orElse("the form \"" + form.label() + "\" was not run; run it to have this judged");
@@ -88,7 +88,7 @@ public final class Judge {
     private RequirementResult compare(Duty duty) {
         String bound = lowerEnd(comparison.confidence());
         double required = 0 - comparison.allowedLoss();
-        Optional<String> obstacle = obstacle(duty);
+        Optional<String> obstacle = obstacle(duty, TrialForm.THIS_FLEET);
         Optional<TrialTally> ours = trial.tally(TrialForm.THIS_FLEET, Side.CANDIDATE);
         Optional<TrialTally> theirs = trial.tally(TrialForm.THIS_FLEET, Side.IN_SERVICE);
         if (obstacle.isPresent() || ours.isEmpty() || theirs.isEmpty()) {
@@ -102,9 +102,9 @@ public final class Judge {
                 : RequirementResult.notJudged(ComparisonRule.NAME, required, bound, estimate.note());
     }
 
-    /** Why no figure of this duty can be judged: a material of its infeed that was not tried. */
-    private Optional<String> obstacle(Duty duty) {
-        return trial.notTried().entrySet().stream()
+    /** Why no figure of this duty can be judged in this form: a material of its infeed that was not tried. */
+    private Optional<String> obstacle(Duty duty, TrialForm form) {
+        return trial.notTried(form).entrySet().stream()
                 .filter(entry -> duty.infeedMix().getOrDefault(entry.getKey(), 0.0) > 0)
                 .min(Map.Entry.comparingByKey())
                 .map(Map.Entry::getValue);

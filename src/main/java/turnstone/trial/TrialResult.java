@@ -22,6 +22,7 @@ public final class TrialResult {
     private final List<LocalDate> days;
     private final List<TrialShowing> showings;
     private final Map<String, String> notTried;
+    private final Map<String, String> oneMachineOnly;
     private final Map<Seat, TrialTally> tallies;
 
     private TrialResult(Builder builder) {
@@ -32,6 +33,7 @@ public final class TrialResult {
         showings.forEach(showing -> ascending.add(showing.day()));
         days = List.copyOf(ascending);
         notTried = new TreeMap<>(builder.notTried);
+        oneMachineOnly = new TreeMap<>(builder.oneMachineOnly);
         tallies = Map.copyOf(builder.tallies);
     }
 
@@ -65,6 +67,15 @@ public final class TrialResult {
         return Map.copyOf(notTried);
     }
 
+    /** Materials that could not be tried in a form, with the reason: {@link #notTried()} and those that this form alone can't try. */
+    public Map<String, String> notTried(TrialForm form) {
+        Map<String, String> reasons = new TreeMap<>(notTried);
+        if (form == TrialForm.MACHINE_NOT_SEEN) {
+            oneMachineOnly.forEach(reasons::putIfAbsent);
+        }
+        return reasons;
+    }
+
     /** The tally of one form and side; empty where the trial did not make it. */
     public Optional<TrialTally> tally(TrialForm form, Side side) {
         return Optional.ofNullable(tallies.get(new Seat(form, side)));
@@ -76,6 +87,7 @@ public final class TrialResult {
         private final Optional<String> inService;
         private final List<TrialShowing> showings = new ArrayList<>();
         private final Map<String, String> notTried = new TreeMap<>();
+        private final Map<String, String> oneMachineOnly = new TreeMap<>();
         private final Map<Seat, TrialTally> tallies = new HashMap<>();
 
         private Builder(String candidate, Optional<String> inService) {
@@ -102,6 +114,16 @@ public final class TrialResult {
                     material
                             + " was not tried: all its trays lie in one group; show a tray of another group, or deal its"
                             + " trays into two groups or more");
+        }
+
+        /** Says that without one of the machines a material has no trays left of another group, so that it can't be tried on it as not seen. */
+        public Builder oneMachineOnly(String material) {
+            oneMachineOnly.put(
+                    material,
+                    material
+                            + " was not tried on a machine not seen: without one machine no other tray of it is left;"
+                            + " show trays of it on another machine");
+            return this;
         }
 
         /** Gives the tally of one form and side. */
