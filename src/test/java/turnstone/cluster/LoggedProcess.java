@@ -58,6 +58,30 @@ final class LoggedProcess implements AutoCloseable {
         return text(talk);
     }
 
+    /** Sends it a signal by its name, such as {@code INT}. */
+    void signal(String name) {
+        run("kill", "-" + name, Long.toString(process.pid()));
+    }
+
+    /** From now on it can write so many bytes into a file and no more. */
+    void limitFiles(long most_bytes) {
+        run("prlimit", "--pid", Long.toString(process.pid()), "--fsize=" + most_bytes);
+    }
+
+    private static void run(String... command) {
+        try {
+            int code = new ProcessBuilder(command).inheritIO().start().waitFor();
+            if (code != 0) {
+                throw new IllegalStateException(String.join(" ", command) + " ended with code " + code);
+            }
+        } catch (IOException failure) {
+            throw new UncheckedIOException(failure);
+        } catch (InterruptedException interrupted) {
+            Thread.currentThread().interrupt();
+            throw new IllegalStateException(interrupted);
+        }
+    }
+
     /** Waits for its end; past {@code limit} it is ended and the test fails with what it had said. */
     Ended await(Duration limit) {
         try {

@@ -28,7 +28,7 @@ final class StandaloneCluster implements AutoCloseable {
     private static final Path BASE = Path.of(System.getProperty("turnstone.basedir"));
     private static final Path ENGINE = BASE.resolve("target/engine");
     private static final Duration START_LIMIT = Duration.ofSeconds(60);
-    private static final Duration RUN_LIMIT = Duration.ofMinutes(4);
+    static final Duration RUN_LIMIT = Duration.ofMinutes(4);
     private static final Pattern MASTER_URL =
             Pattern.compile("Starting Spark master at (spark://127\\.0\\.0\\.1:\\d+)");
     private static final Pattern MASTER_PAGE_PORT = Pattern.compile("MasterWebUI.* started at http://[^:]+:(\\d+)");
@@ -143,12 +143,18 @@ final class StandaloneCluster implements AutoCloseable {
 
     /** Runs the launcher on this cluster: {@code scripts/turnstone ARGUMENTS… --master URL -- …}, with the jar that the build packed. */
     Ended turnstone(String... arguments) {
+        return startTurnstone(List.of(), arguments).await(RUN_LIMIT);
+    }
+
+    /** Starts the launcher on this cluster, with further options for the engine. */
+    LoggedProcess startTurnstone(List<String> engineOptions, String... arguments) {
         List<String> command = new ArrayList<>();
         command.add(BASE.resolve("scripts/turnstone").toString());
         command.addAll(Arrays.asList(arguments));
         command.addAll(List.of("--master", master, "--"));
         command.addAll(loopback());
-        return run(
+        command.addAll(engineOptions);
+        return begin(
                 command,
                 Map.of(
                         "TURNSTONE_BUILD",
@@ -158,8 +164,12 @@ final class StandaloneCluster implements AutoCloseable {
     }
 
     private Ended run(List<String> command, Map<String, String> environment) {
+        return begin(command, environment).await(RUN_LIMIT);
+    }
+
+    private LoggedProcess begin(List<String> command, Map<String, String> environment) {
         runs++;
-        return LoggedProcess.start("run-" + runs, folder, command, environment).await(RUN_LIMIT);
+        return LoggedProcess.start("run-" + runs, folder, command, environment);
     }
 
     private static List<String> java(String memory) {
