@@ -21,7 +21,7 @@ final class AuditLines {
                 audit.number(),
                 found.date(),
                 found.method().label(),
-                found.stream().label(),
+                found.mass_kg().isEmpty() ? "valves" : found.stream().label(),
                 found.duty(),
                 audit.by()));
         if (!found.mass_kg().isEmpty()) {

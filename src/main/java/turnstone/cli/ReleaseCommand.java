@@ -10,6 +10,7 @@ import picocli.CommandLine.Mixin;
 import picocli.CommandLine.Option;
 import picocli.CommandLine.Parameters;
 import turnstone.night.Places;
+import turnstone.night.PlantTerms;
 import turnstone.plant.Plant;
 import turnstone.plant.Spelling;
 import turnstone.shelf.Release;
@@ -74,6 +75,7 @@ final class ReleaseCommand implements Callable<Integer> {
                 throw Spelling.unknown("sorter", sorter, file.sorters()).at("--sorters");
             }
         }
+        PlantTerms.require(file, Models.find(model, plant.file), "the model");
         Optional<SigningKey> signing =
                 (key != null ? Optional.of(key) : file.signing().privateKey()).map(SigningKey::read);
         Release wish = Release.of(model, why.reason, why.by)

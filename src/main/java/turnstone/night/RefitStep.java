@@ -36,7 +36,7 @@ public final class RefitStep {
     /**
      * What is in service, checked against this plant's terms.
      *
-     * @throws Fault of kind input where it is kept on another count scale or other channels
+     * @throws Fault of kind input where it is on another count scale, wavelength axis or head
      */
     public static Optional<Model> inService(Plant plant, Shelf shelf) {
         Optional<ShelfEntry> entry = shelf.inService();
@@ -50,14 +50,7 @@ public final class RefitStep {
                         .at(shelf.describe())
                         .found("no model " + fingerprint)
                         .remedy("restore the shelf from a copy"));
-        List<String> differences = plant.countScale().differences(model.countScale());
-        if (!differences.isEmpty()) {
-            throw Fault.input("the model in service is on another count scale than the plant file")
-                    .at("model " + Words.shortened(fingerprint))
-                    .found(differences.get(0)
-                            + (differences.size() > 1 ? " and " + (differences.size() - 1) + " more" : ""))
-                    .remedy("use the plant file that it was made with, or another shelf");
-        }
+        PlantTerms.require(plant, model, "the model in service");
         return Optional.of(model);
     }
 }

@@ -187,6 +187,13 @@ class ShelfCommandsTest {
         assertThat(run("history")).isEqualTo(2);
         assertThat(err).contains("publicKey");
         Files.writeString(
+                plantFile(), PLANT + "release: automatic\nsigning: {unsigned: refused, publicKey: shore.public}\n");
+        assertThat(run("history")).isEqualTo(2);
+        assertThat(err).contains("a night that releases has to sign").contains("privateKey");
+        Files.writeString(plantFile(), PLANT + "signing: {unsigned: never}\n");
+        assertThat(run("history")).isEqualTo(2);
+        assertThat(err).contains("unsigned");
+        Files.writeString(
                 plantFile(), PLANT + "signing: {unsigned: refused, publicKey: shore.public, privateKey: shore}\n");
         release(a);
         assertThat(out).contains("signed by key");
@@ -214,6 +221,27 @@ class ShelfCommandsTest {
         assertThat(run("show", b, "--lineage")).isZero();
         assertThat(out).contains("revision 2 since");
         assertThat(run("refit", "--again", b)).as(err).isZero();
+    }
+
+    @Test
+    void aModelThatDoesNotFitThePlantIsNotReleased() throws IOException {
+        String a = refit("1e-3");
+        release(a);
+        String b = refit("1e-2");
+        Files.writeString(plantFile(), PLANT.replace("step: 1,", "step: 0.5,"));
+        assertThat(run("release", b, "--reason", "r")).isEqualTo(3);
+        assertThat(err).contains("another count scale").contains("step");
+        Files.writeString(
+                plantFile(), PLANT.replace("channels: 3\n", "axis: {first_nm: 1000, last_nm: 1200, channels: 3}\n"));
+        assertThat(run("release", b, "--reason", "r")).isEqualTo(3);
+        assertThat(err).contains("another wavelength axis").contains("3 channels from 1000");
+        Files.writeString(plantFile(), PLANT.replace("input: absorbance}", "input: absorbance, head: {snv: on}}"));
+        assertThat(run("release", b, "--reason", "r")).isEqualTo(3);
+        assertThat(err).contains("another pretreatment head");
+        Files.writeString(plantFile(), PLANT);
+        assertThat(run("history")).isZero();
+        assertThat(out.lines()).hasSize(3);
+        release(b);
     }
 
     @Test
