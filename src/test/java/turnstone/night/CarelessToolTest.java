@@ -24,7 +24,7 @@ import turnstone.trial.TrialTally;
 /**
  * What each shortcut does to decision recovery on the invented plant, in points of the mean over materials unless said otherwise.
  *
- * <p>The bounds are about half of what a few other seeds gave; {@code docs/sample-plant.md} has the amounts.
+ * <p>The bounds leave room to what two seeds gave; {@code docs/sample-plant.md} has the amounts.
  */
 @ExtendWith({SharedSession.class, SharedPlant.class})
 @TestInstance(TestInstance.Lifecycle.PER_CLASS)
