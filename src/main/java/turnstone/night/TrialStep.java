@@ -16,7 +16,6 @@ import turnstone.refit.Window;
 import turnstone.refit.WindowSums;
 import turnstone.spark.TrialJob;
 import turnstone.spark.TrialTallies;
-import turnstone.trial.ComparisonRule;
 import turnstone.trial.Judge;
 import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
@@ -96,7 +95,7 @@ public final class TrialStep {
     }
 
     private static Tried judged(Plant plant, TrialResult result, int models) {
-        return new Tried(result, Judge.verdict(result, plant.duties(), ComparisonRule.standard()), models);
+        return new Tried(result, Judge.verdict(result, plant.duties()), models);
     }
 
     /** Why the day can't serve for a trial at all. */

@@ -60,7 +60,8 @@ final class DutyReader {
                 Duty.Stream.of(entry.at("productStream").text()),
                 sorters.stream().filter(machines::contains).toList(),
                 mix,
-                requirements(entry.at("requirements")));
+                requirements(entry.at("requirements")),
+                new DutyTermsReader(names, targets, mix).terms(entry));
     }
 
     private List<String> targets(Entry list, Map<String, List<String>> groups) {
@@ -130,6 +131,7 @@ final class DutyReader {
             Requirement requirement = new Requirement(
                     Requirement.Figure.of(entry.at("figure").text()),
                     Requirement.Unseen.of(entry.text("unseen", "tray")),
+                    Requirement.Reach.of(entry.text("of", Requirement.Reach.THIS_FLEET_TONIGHT.label())),
                     entry.at("least").number(),
                     Requirement.Bound.of(entry.text("bound", "point")),
                     entry.number("confidence", USUAL_CONFIDENCE));

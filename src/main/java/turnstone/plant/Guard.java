@@ -8,7 +8,8 @@ import java.util.List;
  *
  * @param kind what is guarded
  * @param limit the most or the least that will do, see {@link Kind#side}
- * @param bound the figure itself, or the end of its interval that speaks against a release; only for {@link Kind#hasInterval}
+ * @param bound the figure itself, or {@code LOWER} for the end of its interval that speaks against a release; only for
+ *     {@link Kind#hasInterval}
  * @param confidence of that end, one-sided
  */
 public record Guard(Kind kind, double limit, Requirement.Bound bound, double confidence) {

@@ -83,6 +83,40 @@ final class PlantFingerprint {
                     .put("least", requirement.least())
                     .put("confidence", requirement.confidence());
         }
+        put(node.putObject("terms"), duty.terms());
+    }
+
+    private static void put(ObjectNode node, DutyTerms terms) {
+        put(node.putObject("infeedMixDeviation"), terms.mixDeviation());
+        terms.costs()
+                .ifPresent(costs -> node.putObject("costs")
+                        .put("targetLost_perTonne", costs.targetLost_perTonne())
+                        .put("otherSent_perTonne", costs.otherSent_perTonne()));
+        terms.required()
+                .ifPresent(required -> node.putObject("required")
+                        .put("figure", Words.of(required.figure()))
+                        .put("share", required.share()));
+        node.put("cut", Words.of(terms.cut()));
+        GainRule gain = terms.gain();
+        node.putObject("gain")
+                .put("above", gain.above())
+                .put("confidence", gain.confidence())
+                .put("days", gain.days())
+                .put("sorters", gain.sorters())
+                .put("showings", gain.showings());
+        ArrayNode guards = node.putArray("guards");
+        terms.guards()
+                .forEach(guard -> guards.addObject()
+                        .put("name", guard.name())
+                        .put("limit", guard.limit())
+                        .put("confidence", guard.confidence()));
+        ArrayNode limits = node.putArray("limits");
+        terms.limits()
+                .forEach(limit -> limits.addObject()
+                        .put("material", limit.material())
+                        .put("most_ppm", limit.most_ppm())
+                        .put("use", Words.of(limit.use()))
+                        .put("confidence", limit.confidence()));
     }
 
     private static void putAll(ArrayNode array, List<String> texts) {

@@ -84,7 +84,7 @@ final class PlantSchema {
             case UNKNOWN -> unknownKey(error.getProperty(), holder).at(place);
             case MISSING ->
                 Fault.usage("key `" + error.getProperty() + "` is missing").at(place);
-            default -> wrongValue(error, holder).at(place).found(shown(value));
+            default -> wrongValue(error, holder, value).at(place).found(shown(value));
         };
     }
 
@@ -102,7 +102,7 @@ final class PlantSchema {
                 : Fault.usage(what).expected("one of " + String.join(", ", known));
     }
 
-    private static Fault wrongValue(Error error, JsonNode holder) {
+    private static Fault wrongValue(Error error, JsonNode holder, JsonNode value) {
         JsonNode limit = holder.path(error.getKeyword());
         return switch (error.getKeyword()) {
             case "type" -> {
@@ -112,7 +112,7 @@ final class PlantSchema {
                 boolean quotes = limit.asText().equals("string");
                 yield quotes ? fault.remedy("put a text that looks like a number in quotes") : fault;
             }
-            case "enum" -> Fault.usage("not a known word").expected("one of " + listed(limit));
+            case "enum" -> unknownWord(value.asText(), limit);
             case "const" -> Fault.usage("not the value that stands here").expected(limit.asText());
             case "pattern" ->
                 Fault.usage("not of the form that stands here")
@@ -127,6 +127,14 @@ final class PlantSchema {
             case "maxProperties" -> Fault.usage("too many keys").expected("at most " + limit.asText());
             default -> Fault.usage(error.getMessage());
         };
+    }
+
+    private static Fault unknownWord(String word, JsonNode known) {
+        List<String> words = new ArrayList<>();
+        known.forEach(one -> words.add(one.asText()));
+        String nearest = Spelling.nearest(word, words);
+        String hint = Spelling.near(word, nearest) ? ", did you mean `" + nearest + "`?" : "";
+        return Fault.usage("not a known word" + hint).expected("one of " + String.join(", ", words));
     }
 
     private static String types(JsonNode type) {

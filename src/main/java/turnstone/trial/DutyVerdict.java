@@ -14,25 +14,42 @@ import turnstone.json.Json;
  * @param name the duty
  * @param decision release where every requirement is met, hold otherwise
  * @param mainReason one sentence: the widest miss, else what could not be judged, else the closest of those that are met
- * @param requirements as judged, the plant's in their order, then the comparison
+ * @param requirements as judged: the plant's in their order, the gain, guards, limits
  * @param figures what was found, for each form and side
+ * @param bounds on single materials in the product
+ * @param costs of what goes astray, for each side; empty where the duty names none
  */
 public record DutyVerdict(
         String name,
         Decision decision,
         String mainReason,
         List<RequirementResult> requirements,
-        List<FigureLine> figures) {
+        List<FigureLine> figures,
+        List<PpmBound> bounds,
+        List<CostLine> costs) {
     /** Keeps copies. */
     public DutyVerdict {
         requirements = List.copyOf(requirements);
         figures = List.copyOf(figures);
+        bounds = List.copyOf(bounds);
+        costs = List.copyOf(costs);
     }
 
-    static DutyVerdict of(String name, List<RequirementResult> requirements, List<FigureLine> figures) {
+    static DutyVerdict of(
+            String name,
+            List<RequirementResult> requirements,
+            List<FigureLine> figures,
+            List<PpmBound> bounds,
+            List<CostLine> costs) {
         boolean release = !requirements.isEmpty() && requirements.stream().allMatch(RequirementResult::met);
         return new DutyVerdict(
-                name, release ? Decision.RELEASE : Decision.HOLD, mainReason(requirements), requirements, figures);
+                name,
+                release ? Decision.RELEASE : Decision.HOLD,
+                mainReason(requirements),
+                requirements,
+                figures,
+                bounds,
+                costs);
     }
 
     private static String mainReason(List<RequirementResult> requirements) {
@@ -40,29 +57,30 @@ public record DutyVerdict(
             return "the plant file gives this duty no requirement, and nothing is in service to compare with;"
                     + " write one to have it judged";
         }
-        Optional<RequirementResult> closest = requirements.stream()
-                .filter(requirement -> requirement.margin().isPresent())
-                .min(Comparator.comparingDouble(
-                        requirement -> requirement.margin().orElseThrow()));
-        if (closest.isPresent() && !closest.get().met()) {
-            return comparison(closest.get());
+        Optional<RequirementResult> worst = closest(requirements, RequirementResult.Outcome.NOT_MET);
+        if (worst.isPresent()) {
+            return worst.get().sentence();
         }
         for (RequirementResult requirement : requirements) {
             if (requirement.outcome() == RequirementResult.Outcome.NOT_JUDGED) {
-                return requirement.name() + " could not be judged: " + requirement.why();
+                return requirement.sentence();
             }
         }
-        String comparison = comparison(closest.orElseThrow());
+        String comparison = closest(requirements, RequirementResult.Outcome.MET)
+                .orElseThrow()
+                .sentence();
         return requirements.size() == 1
                 ? comparison
                 : String.format(
                         Locale.ROOT, "all %d requirements are met; closest: %s", requirements.size(), comparison);
     }
 
-    private static String comparison(RequirementResult requirement) {
-        return requirement.name() + " is "
-                + requirement.amount(requirement.found().orElseThrow()) + ", required "
-                + requirement.amount(requirement.required());
+    private static Optional<RequirementResult> closest(
+            List<RequirementResult> requirements, RequirementResult.Outcome outcome) {
+        return requirements.stream()
+                .filter(requirement -> requirement.outcome() == outcome)
+                .min(Comparator.comparingDouble(
+                        requirement -> requirement.closeness().orElseThrow()));
     }
 
     ObjectNode json() {
@@ -72,6 +90,10 @@ public record DutyVerdict(
         requirements.forEach(requirement -> list.add(requirement.json()));
         ArrayNode found = node.putArray("figures");
         figures.forEach(line -> found.add(VerdictJson.figure(line)));
+        ArrayNode limits = node.putArray("limits");
+        bounds.forEach(bound -> limits.add(bound.json()));
+        ObjectNode money = node.putObject("costs_perTonne");
+        costs.forEach(line -> money.put(line.side() == Side.CANDIDATE ? "candidate" : "inService", line.perTonne()));
         return node;
     }
 }

@@ -1,17 +1,13 @@
 package turnstone.trial;
 
 import java.time.LocalDate;
-import java.util.Locale;
 import java.util.Map;
-import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.TreeMap;
 import java.util.TreeSet;
 import java.util.function.Function;
 import turnstone.decide.Quantiles;
 import turnstone.plant.Duty;
-import turnstone.plant.Required;
-import turnstone.plant.Requirement;
 
 /**
  * The gain of a candidate over what is in service over several days, on the same showings.
@@ -39,50 +35,24 @@ final class GainEstimator {
 
     private final Duty duty;
     private final Map<String, TrialShowing> showings;
-    private final String name;
-    private final Function<Frontier, OptionalDouble> figure;
+    private final DutyFigure figure;
 
-    private GainEstimator(
-            Duty duty, Map<String, TrialShowing> showings, String name, Function<Frontier, OptionalDouble> figure) {
+    private GainEstimator(Duty duty, Map<String, TrialShowing> showings, DutyFigure figure) {
         this.duty = duty;
         this.showings = showings;
-        this.name = name;
         this.figure = figure;
     }
 
     /** From scores: at the figure that the duty fixes, else by the decision for the nearest material. */
     static Gain ofScores(
             Duty duty, ScoreHistogram candidate, ScoreHistogram inService, Map<String, TrialShowing> showings) {
-        Optional<Required> required = duty.terms().required();
-        if (required.isEmpty()) {
-            return nearest(duty, showings).gain(candidate, inService);
-        }
-        double share = required.get().share();
-        boolean purity = required.get().figure() == Requirement.Figure.DECISION_PURITY;
-        String name = String.format(
-                Locale.ROOT,
-                purity ? "decision recovery at purity %.2f %%" : "decision purity at recovery %.2f %%",
-                100 * share);
-        return new GainEstimator(
-                        duty,
-                        showings,
-                        name,
-                        frontier -> purity ? frontier.recoveryAtPurity(share) : frontier.purityAtRecovery(share))
-                .gain(candidate, inService);
+        return new GainEstimator(duty, showings, DutyFigure.of(duty)).gain(candidate, inService);
     }
 
     /** From tallies: recovery by the decision for the nearest material. */
     static Gain ofTallies(Duty duty, TrialTally candidate, TrialTally inService, Map<String, TrialShowing> showings) {
-        return nearest(duty, showings)
+        return new GainEstimator(duty, showings, DutyFigure.nearest())
                 .gain(ScoreHistogram.ofDecisions(duty, candidate), ScoreHistogram.ofDecisions(duty, inService));
-    }
-
-    private static GainEstimator nearest(Duty duty, Map<String, TrialShowing> showings) {
-        return new GainEstimator(
-                duty,
-                showings,
-                "decision recovery",
-                frontier -> OptionalDouble.of(frontier.at(ScoreBins.NEAREST).recovery()));
     }
 
     private Gain gain(ScoreHistogram candidate, ScoreHistogram inService) {
@@ -138,8 +108,8 @@ final class GainEstimator {
     }
 
     private OptionalDouble difference(Sums sums) {
-        OptionalDouble ours = figure.apply(sums.candidate().frontier());
-        OptionalDouble theirs = figure.apply(sums.inService().frontier());
+        OptionalDouble ours = figure.of().apply(sums.candidate().frontier());
+        OptionalDouble theirs = figure.of().apply(sums.inService().frontier());
         return ours.isEmpty() || theirs.isEmpty()
                 ? OptionalDouble.empty()
                 : OptionalDouble.of(ours.getAsDouble() - theirs.getAsDouble());
@@ -206,7 +176,7 @@ final class GainEstimator {
 
         private Gain of(OptionalDouble point, OptionalDouble lower, OptionalDouble error, String note) {
             double confidence = duty.terms().gain().confidence();
-            return new Gain(name, point, lower, error, confidence, days, sorters, blocks, leastShowings, note);
+            return new Gain(figure.name(), point, lower, error, confidence, days, sorters, blocks, leastShowings, note);
         }
     }
 }

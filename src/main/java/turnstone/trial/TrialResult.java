@@ -7,6 +7,7 @@ import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.OptionalInt;
 import java.util.TreeMap;
 import java.util.TreeSet;
 
@@ -17,6 +18,8 @@ import java.util.TreeSet;
 public final class TrialResult {
     private record Seat(TrialForm form, Side side) {}
 
+    private record Bench(String duty, TrialForm form, Side side) {}
+
     private final String candidate;
     private final Optional<String> inService;
     private final List<LocalDate> days;
@@ -24,6 +27,11 @@ public final class TrialResult {
     private final Map<String, String> notTried;
     private final Map<String, String> oneMachineOnly;
     private final Map<Seat, TrialTally> tallies;
+    private final Map<Bench, ScoreHistogram> scores;
+    private final Map<Bench, Integer> cuts;
+    private final NightFacts facts;
+    private final List<TrialShowing> earlierShowings;
+    private final Optional<TrialTally> earlier;
 
     private TrialResult(Builder builder) {
         candidate = builder.candidate;
@@ -35,6 +43,11 @@ public final class TrialResult {
         notTried = new TreeMap<>(builder.notTried);
         oneMachineOnly = new TreeMap<>(builder.oneMachineOnly);
         tallies = Map.copyOf(builder.tallies);
+        scores = Map.copyOf(builder.scores);
+        cuts = Map.copyOf(builder.cuts);
+        facts = builder.facts;
+        earlierShowings = List.copyOf(builder.earlierShowings);
+        earlier = Optional.ofNullable(builder.earlier);
     }
 
     /** Begins the result of a trial of this candidate against what is in service, by their fingerprints. */
@@ -81,6 +94,32 @@ public final class TrialResult {
         return Optional.ofNullable(tallies.get(new Seat(form, side)));
     }
 
+    /** Scores of one form and side for a duty; empty where the trial did not bin them. */
+    public Optional<ScoreHistogram> scores(String duty, TrialForm form, Side side) {
+        return Optional.ofNullable(scores.get(new Bench(duty, form, side)));
+    }
+
+    /** The cut of one form and side for a duty, set on earlier days; empty where none was set. */
+    public OptionalInt cut(String duty, TrialForm form, Side side) {
+        Integer cut = cuts.get(new Bench(duty, form, side));
+        return cut == null ? OptionalInt.empty() : OptionalInt.of(cut);
+    }
+
+    /** What the night found out beside tallies. */
+    public NightFacts facts() {
+        return facts;
+    }
+
+    /** Showings of earlier trials, for bounds that pool many nights. */
+    public List<TrialShowing> earlierShowings() {
+        return earlierShowings;
+    }
+
+    /** What the candidate side of earlier trials of this fleet counted on them. */
+    public Optional<TrialTally> earlier() {
+        return earlier;
+    }
+
     /** Collects a result. */
     public static final class Builder {
         private final String candidate;
@@ -89,6 +128,11 @@ public final class TrialResult {
         private final Map<String, String> notTried = new TreeMap<>();
         private final Map<String, String> oneMachineOnly = new TreeMap<>();
         private final Map<Seat, TrialTally> tallies = new HashMap<>();
+        private final Map<Bench, ScoreHistogram> scores = new HashMap<>();
+        private final Map<Bench, Integer> cuts = new HashMap<>();
+        private final List<TrialShowing> earlierShowings = new ArrayList<>();
+        private NightFacts facts = NightFacts.none();
+        private TrialTally earlier;
 
         private Builder(String candidate, Optional<String> inService) {
             this.candidate = candidate;
@@ -129,6 +173,31 @@ public final class TrialResult {
         /** Gives the tally of one form and side. */
         public Builder tally(TrialForm form, Side side, TrialTally tally) {
             tallies.put(new Seat(form, side), tally);
+            return this;
+        }
+
+        /** Gives the scores of one form and side for a duty, by its name, on the days judged. */
+        public Builder scores(String duty, TrialForm form, Side side, ScoreHistogram histogram) {
+            scores.put(new Bench(duty, form, side), histogram);
+            return this;
+        }
+
+        /** Gives the cut that was set on earlier days; figures of this form and side are then taken at it. */
+        public Builder cut(String duty, TrialForm form, Side side, int cut) {
+            cuts.put(new Bench(duty, form, side), cut);
+            return this;
+        }
+
+        /** Says what the night found out beside tallies. */
+        public Builder facts(NightFacts found) {
+            facts = found;
+            return this;
+        }
+
+        /** Gives what the candidate side of earlier trials of this fleet counted, none of it on the days judged. */
+        public Builder earlier(Collection<TrialShowing> of, TrialTally tally) {
+            earlierShowings.addAll(of);
+            earlier = tally;
             return this;
         }
 

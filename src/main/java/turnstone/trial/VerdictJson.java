@@ -21,6 +21,7 @@ final class VerdictJson {
         Estimate estimate = line.estimate();
         ObjectNode node = Json.object();
         node.put("form", line.form().label()).put("side", line.side().label()).put("figure", line.figureName());
+        node.put("of", line.reach().label());
         put(node, "found", estimate.point());
         put(node, "lower", estimate.lower());
         put(node, "upper", estimate.upper());

@@ -43,15 +43,7 @@ final class VerdictText {
             wrap(page, "  ", duty.mainReason() + ".");
         }
         for (RequirementResult requirement : duty.requirements()) {
-            page.append("  - ").append(requirement.name()).append(": ");
-            page.append(requirement.outcome().label()).append('\n');
-            String numbers = requirement.found().isPresent()
-                    ? "found " + requirement.amount(requirement.found().getAsDouble()) + ", required "
-                            + requirement.amount(requirement.required()) + ", margin "
-                            + points(requirement.margin().orElseThrow()) + " (" + requirement.bound() + ")"
-                    : "required " + requirement.amount(requirement.required()) + " (" + requirement.bound() + "); "
-                            + requirement.why();
-            wrap(page, "    ", numbers);
+            append(page, requirement);
         }
         String heading = "";
         for (FigureLine line : duty.figures()) {
@@ -60,8 +52,32 @@ final class VerdictText {
                 page.append("  ").append(wanted).append('\n');
                 heading = wanted;
             }
-            wrap(page, "    ", line.figureName() + " " + estimate(line.estimate()));
+            wrap(page, "    ", line.reach().label() + ": " + line.figureName() + " " + estimate(line.estimate()));
         }
+        for (CostLine line : duty.costs()) {
+            wrap(
+                    page,
+                    "  ",
+                    String.format(
+                            Locale.ROOT,
+                            "astray, %s: %.2f per tonne of infeed",
+                            line.side().label(),
+                            line.perTonne()));
+        }
+        for (PpmBound bound : duty.bounds()) {
+            wrap(page, "  ", bound.text());
+        }
+    }
+
+    private static void append(StringBuilder page, RequirementResult requirement) {
+        page.append("  - ").append(requirement.name()).append(": ");
+        page.append(requirement.outcome().label()).append('\n');
+        String numbers = requirement.found().isPresent()
+                ? "found " + requirement.amount(requirement.found().getAsDouble()) + ", required "
+                        + requirement.limit() + ", margin " + requirement.marginAmount() + " (" + requirement.bound()
+                        + ")" + (requirement.why().isEmpty() ? "" : "; " + requirement.why())
+                : "required " + requirement.limit() + " (" + requirement.bound() + "); " + requirement.why();
+        wrap(page, "    ", numbers);
     }
 
     private static String estimate(Estimate estimate) {

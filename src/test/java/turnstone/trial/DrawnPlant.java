@@ -6,6 +6,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Random;
+import java.util.SplittableRandom;
 import java.util.TreeMap;
 import turnstone.plant.Duty;
 import turnstone.plant.DutyTerms;
@@ -22,7 +23,6 @@ import turnstone.plant.Requirement;
 final class DrawnPlant {
     static final Map<String, Double> MIX = new TreeMap<>(Map.of("PET", 0.45, "tray", 0.20, "PP", 0.25, "PVC", 0.10));
     private static final Map<String, Double> SCORE_DEVIATION = Map.of("PET", 6.0, "tray", 6.0, "PP", 11.0, "PVC", 12.0);
-    private static final double SHARED = 0.95;
     private static final int HALVINGS = 40;
 
     /** Effects of one side, by sorter or night and material. */
@@ -49,10 +49,14 @@ final class DrawnPlant {
     private final Effects shared = new Effects();
     private final Effects own = new Effects();
     private final double purity;
+    /** Correlation of the two sides' own terms. */
+    private final double correlation;
+
     private double shift;
 
     DrawnPlant(long seed, int sorterCount) {
-        random = new Random(seed);
+        // Neighbouring seeds of Random begin alike.
+        random = new Random(new SplittableRandom(seed).nextLong());
         for (int s = 0; s < sorterCount; s++) {
             sorters.add("sorter " + (10 + s));
         }
@@ -63,6 +67,7 @@ final class DrawnPlant {
         draw(shared, between(0.15, 0.40), between(0.05, 0.15), between(0.20, 0.40));
         draw(own, between(0.03, 0.08), between(0.01, 0.03), between(0.03, 0.10));
         purity = between(0.94, 0.97);
+        correlation = between(0.96, 0.99);
         Required required = new Required(Requirement.Figure.DECISION_PURITY, purity);
         duty = new Duty("PET out", List.of("PET"), Duty.Stream.EJECTED, sorters, MIX, List.of())
                 .with(DutyTerms.standard().requiring(required));
@@ -240,9 +245,9 @@ final class DrawnPlant {
                 + own.showingSpread * random.nextGaussian()
                 + (distance.get(material) > 0 ? shift : -shift);
         for (int i = 0; i < records; i++) {
-            double common = Math.sqrt(SHARED) * random.nextGaussian();
-            double ours = deviation * (candidate + common + Math.sqrt(1 - SHARED) * random.nextGaussian());
-            double theirs = deviation * (middle + common + Math.sqrt(1 - SHARED) * random.nextGaussian());
+            double common = Math.sqrt(correlation) * random.nextGaussian();
+            double ours = deviation * (candidate + common + Math.sqrt(1 - correlation) * random.nextGaussian());
+            double theirs = deviation * (middle + common + Math.sqrt(1 - correlation) * random.nextGaussian());
             shown.candidate.add(id, material, bin(ours), 1);
             shown.inService.add(id, material, bin(theirs), 1);
         }

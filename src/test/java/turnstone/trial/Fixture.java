@@ -27,9 +27,13 @@ final class Fixture {
 
     /** A showing with records decided PET, decided PP, decided PET but unfamiliar, and without signal. */
     Fixture showing(String sorter, String material, long pet, long pp, long unfamiliar, long noSignal) {
+        return showing(LocalDate.of(2026, 3, 13), sorter, material, pet, pp, unfamiliar, noSignal);
+    }
+
+    private Fixture showing(
+            LocalDate day, String sorter, String material, long pet, long pp, long unfamiliar, long noSignal) {
         String id = "s" + (100 + showings.size());
-        showings.add(new TrialShowing(
-                id, LocalDate.of(2026, 3, 13), sorter, sorter + "@2026-01-01", material + "-1", 1, material));
+        showings.add(new TrialShowing(id, day, sorter, sorter + "@2026-01-01", material + "-1", 1, material));
         tally.add(new TallyCell(id, material, "PET", Recognition.FAMILIAR), pet);
         tally.add(new TallyCell(id, material, "PP", Recognition.FAMILIAR), pp);
         tally.add(new TallyCell(id, material, "PET", Recognition.UNFAMILIAR), unfamiliar);
@@ -50,15 +54,23 @@ final class Fixture {
 
     /** Six sorters with four showings of PET and of PP each, errors as given by a repeating pattern. */
     static Fixture fleet(long lost, long[] pattern) {
+        return fleet(lost, pattern, 1);
+    }
+
+    /** The same over some days that end with 13 March. */
+    static Fixture fleet(long lost, long[] pattern, int days) {
         Fixture fixture = new Fixture();
         int i = 0;
-        for (String sorter : List.of("avocet", "curlew", "dunlin", "godwit", "knot", "plover")) {
-            for (int k = 0; k < 4; k++) {
-                long errors = lost + pattern[i % pattern.length];
-                fixture.showing(sorter, "PET", 100 - errors, errors, 0, 0);
-                fixture.showing(
-                        sorter, "PP", pattern[(i + 1) % pattern.length], 100 - pattern[(i + 1) % pattern.length], 0, 0);
-                i++;
+        for (int d = days - 1; d >= 0; d--) {
+            LocalDate day = LocalDate.of(2026, 3, 13).minusDays(d);
+            for (String sorter : List.of("avocet", "curlew", "dunlin", "godwit", "knot", "plover")) {
+                for (int k = 0; k < 4; k++) {
+                    long errors = lost + pattern[i % pattern.length];
+                    long sent = pattern[(i + 1) % pattern.length];
+                    fixture.showing(day, sorter, "PET", 100 - errors, errors, 0, 0);
+                    fixture.showing(day, sorter, "PP", sent, 100 - sent, 0, 0);
+                    i++;
+                }
             }
         }
         return fixture;

@@ -30,7 +30,7 @@ class JudgeTest {
     }
 
     private static Verdict verdict(TrialResult result, Duty... duties) {
-        return Judge.verdict(result, List.of(duties), ComparisonRule.standard());
+        return Judge.verdict(result, List.of(duties));
     }
 
     @Test
@@ -90,17 +90,74 @@ class JudgeTest {
     }
 
     @Test
-    void aCandidateThatLosesMoreThanAllowedHolds() {
-        TrialResult result = result(Optional.of(IN_SERVICE), worse)
-                .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, Fixture.fleet(2, new long[] {0, 1, 2, 1, 1}).tally)
+    void oneNightShowsNoGainAndSaysHowManyMoreItNeeds() {
+        TrialResult result = result(Optional.of(IN_SERVICE), good)
+                .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, Fixture.fleet(3, new long[] {0, 1, 2, 1, 1}).tally)
                 .build();
         Verdict verdict = verdict(result, duty(Fixture.recovery(0.80, Requirement.Bound.POINT)));
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         assertThat(verdict.mainReason())
-                .startsWith("PET out: decision recovery against in service, tray not seen, lower bound is -3.")
-                .endsWith(" points, required -1.00 points");
+                .startsWith("PET out: gain over in service: decision recovery, lower bound could not be judged: "
+                        + "not shown: needs about 4 more nights; found 1 day, 6 sorters and 24 showings")
+                .contains("required 5 days, 6 sorters and 120 showings; so far +");
         assertThat(verdict.duties().get(0).requirements().get(1).outcome())
-                .isEqualTo(RequirementResult.Outcome.NOT_MET);
+                .isEqualTo(RequirementResult.Outcome.NOT_JUDGED);
+        assertThat(verdict.text())
+                .contains("candidate   c0ffee00c0ff")
+                .contains("in service  0ddba11a0ddb")
+                .contains("this fleet, candidate")
+                .contains("this fleet, in service");
+    }
+
+    private static Verdict fiveNights(long lost, long rivalLost, Requirement... requirements) {
+        Fixture ours = Fixture.fleet(lost, PATTERN, 5);
+        Fixture theirs = Fixture.fleet(rivalLost, new long[] {0, 1, 2, 1, 1, 0, 2}, 5);
+        TrialResult result = result(Optional.of(IN_SERVICE), ours)
+                .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, theirs.tally)
+                .build();
+        return verdict(result, duty(requirements));
+    }
+
+    @Test
+    void fiveNightsShowAGainAndSayWhatPowerTheyHad() {
+        Verdict verdict = fiveNights(2, 4, Fixture.recovery(0.80, Requirement.Bound.POINT));
+        assertThat(verdict.decision()).as(verdict.text()).isEqualTo(Decision.RELEASE);
+        RequirementResult gain = verdict.duties().get(0).requirements().get(1);
+        assertThat(gain.name()).isEqualTo("gain over in service: decision recovery, lower bound");
+        assertThat(gain.required()).isZero();
+        assertThat(gain.bound()).isEqualTo("one-sided 95 % lower bound");
+        assertThat(gain.why()).contains("5 nights of 6 sorters show a true gain of +1.00 points ");
+        assertThat(verdict.mainReason()).startsWith("PET out: all 2 requirements are met; closest: ");
+        assertThat(verdict.json()
+                        .path("duties")
+                        .path(0)
+                        .path("requirements")
+                        .path(1)
+                        .path("met")
+                        .asBoolean(false))
+                .isTrue();
+    }
+
+    @Test
+    void aLossIsNoGain() {
+        Verdict verdict = fiveNights(5, 2);
+        assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
+        assertThat(verdict.mainReason())
+                .startsWith("PET out: gain over in service: decision recovery, lower bound is -3.")
+                .contains(" points, required above +0.00 points; no gain was found; found -3.");
+        assertThat(verdict.text().lines()).allMatch(line -> line.length() <= 80);
+    }
+
+    @Test
+    void theSameDecisionsAreNoGain() {
+        Fixture ours = Fixture.fleet(2, PATTERN, 5);
+        TrialResult result = result(Optional.of(IN_SERVICE), ours)
+                .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, Fixture.fleet(2, PATTERN, 5).tally)
+                .build();
+        Verdict verdict = verdict(result, duty());
+        RequirementResult gain = verdict.duties().get(0).requirements().get(0);
+        assertThat(gain.found()).hasValue(0);
+        assertThat(gain.met()).isFalse();
     }
 
     @Test
@@ -113,24 +170,6 @@ class JudgeTest {
         assertThat(verdict.mainReason()).contains("point is 93.83 %, required 95.00 %");
         assertThat(verdict.duties().get(0).requirements().get(1).outcome())
                 .isEqualTo(RequirementResult.Outcome.NOT_JUDGED);
-    }
-
-    @Test
-    void aCandidateThatIsNoWorseIsReleased() {
-        TrialResult result = result(Optional.of(IN_SERVICE), good)
-                .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, Fixture.fleet(3, new long[] {0, 1, 2, 1, 1}).tally)
-                .build();
-        Verdict verdict = verdict(result, duty(Fixture.recovery(0.80, Requirement.Bound.POINT)));
-        assertThat(verdict.decision()).as(verdict.text()).isEqualTo(Decision.RELEASE);
-        RequirementResult comparison = verdict.duties().get(0).requirements().get(1);
-        assertThat(comparison.name()).isEqualTo(ComparisonRule.NAME);
-        assertThat(comparison.required()).isEqualTo(-0.01);
-        assertThat(verdict.mainReason()).startsWith("PET out: all 2 requirements are met; closest: ");
-        assertThat(verdict.text())
-                .contains("candidate   c0ffee00c0ff")
-                .contains("in service  0ddba11a0ddb")
-                .contains("this fleet, candidate")
-                .contains("this fleet, in service");
     }
 
     @Test

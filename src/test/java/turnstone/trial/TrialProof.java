@@ -87,4 +87,23 @@ final class TrialProof {
         }
         return new Releases(trials, released, found, error, Math.sqrt(squares));
     }
+
+    /** Mean misses of the plain and of the nested figure of the rung that was chosen, and what the choice lost to the best rung, in points. */
+    record Ladders(int plants, double plainMiss, double nestedMiss, double nestedError, double lost) {}
+
+    static Ladders ladders(long seed, int plants) {
+        double plain = 0;
+        double nested = 0;
+        double squares = 0;
+        double lost = 0;
+        for (int p = 0; p < plants; p++) {
+            DrawnLadder ladder = new DrawnLadder(seed + p, FLEETS[p % FLEETS.length]);
+            double miss = 100 * (ladder.choice.nested().orElseThrow() - ladder.truth);
+            plain += 100 * (ladder.choice.plain() - ladder.truth) / plants;
+            nested += miss / plants;
+            squares += miss * miss / plants;
+            lost += 100 * (ladder.best - ladder.truth) / plants;
+        }
+        return new Ladders(plants, plain, nested, Math.sqrt((squares - nested * nested) / plants), lost);
+    }
 }

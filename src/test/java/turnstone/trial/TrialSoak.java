@@ -20,6 +20,7 @@ final class TrialSoak {
                         100.0 * c.recoveryHeld() / c.plants(),
                         c.purityWidth() / c.plants(),
                         c.recoveryWidth() / c.plants()));
+        System.out.println(TrialProof.ladders(seed, plants));
         for (double gain : new double[] {-0.01, 0, 0.01}) {
             TrialProof.Releases r = TrialProof.releases(seed, trials, gain);
             System.out.printf(Locale.ROOT, "gain %+.2f: %s%n", 100 * gain, r);
