@@ -16,23 +16,19 @@ import turnstone.ledger.PostOutcome;
 import turnstone.ledger.Replace;
 import turnstone.plant.Plant;
 import turnstone.plant.ProjectSpec;
-import turnstone.plant.ReleaseRule;
 import turnstone.plant.TableFormat;
 import turnstone.refit.HeldOut;
 import turnstone.refit.Recipe;
 import turnstone.refit.Recipes;
 import turnstone.refit.Window;
-import turnstone.shelf.Release;
 import turnstone.shelf.Shelf;
 import turnstone.shelf.ShelfEntry;
-import turnstone.shelf.SigningKey;
 import turnstone.shelf.VerdictReference;
 import turnstone.spark.ProjectJob;
 import turnstone.spark.ProjectResult;
 import turnstone.spark.ProjectSettings;
 import turnstone.spark.Session;
 import turnstone.spark.TableSpec;
-import turnstone.trial.Decision;
 import turnstone.trial.Verdict;
 
 /** The nightly sequence for one day: post, refit, trial, verdict, project. */
@@ -84,7 +80,7 @@ public final class Night {
         Ledger ledger = Places.ledger(plant);
         Shelf shelf = Places.shelf(plant);
         Optional<Model> inService = RefitStep.inService(plant, shelf);
-        long lastChange = shelf.history().size();
+        NightRelease release = NightRelease.prepare(plant, shelf, PROGRAM);
         RunFolder run = RunFolder.next(Places.runs(plant), date);
         RunRecord record = new RunRecord(clock, PROGRAM, plant.file().toString(), date.toString());
         record.put("engine", session.spark().version());
@@ -112,7 +108,9 @@ public final class Night {
         run.write("run.json", record.ended());
         byte[] content = Json.pretty(verdict.json());
         run.write("verdict.json", new String(content, StandardCharsets.UTF_8));
-        Optional<ShelfEntry> released = release(shelf, lastChange, run, verdict, content);
+        VerdictReference reference =
+                new VerdictReference(run.path("verdict.json").toString(), Json.sha256(content));
+        Optional<ShelfEntry> released = release.make(verdict, reference, progress);
         return new Result(run, date, posted.entry(), posted.outcome(), candidate, verdict, projected, released);
     }
 
@@ -190,24 +188,5 @@ public final class Night {
                 + Words.number(
                         projected.counts().accepted() + projected.counts().noSignal()) + " records of " + day.day());
         return Optional.of(projected);
-    }
-
-    private Optional<ShelfEntry> release(Shelf shelf, long lastChange, RunFolder run, Verdict verdict, byte[] content) {
-        if (verdict.decision() != Decision.RELEASE
-                || plant.release() != ReleaseRule.AUTOMATIC
-                || verdict.inService().isEmpty()) {
-            return Optional.empty();
-        }
-        if (shelf.running().map(running -> !running.isWhole()).orElse(false)) {
-            progress.remark(
-                    "not released by the night: single sorters run a model of their own; end the split by hand");
-            return Optional.empty();
-        }
-        VerdictReference reference =
-                new VerdictReference(run.path("verdict.json").toString(), Json.sha256(content));
-        return Optional.of(shelf.release(Release.of(verdict.candidate(), verdict.mainReason(), PROGRAM)
-                .withVerdict(Optional.of(reference))
-                .withKey(plant.signing().privateKey().map(SigningKey::read))
-                .withLastEntry(lastChange)));
     }
 }
