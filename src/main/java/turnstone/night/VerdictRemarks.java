@@ -105,6 +105,7 @@ public final class VerdictRemarks {
             for (FigureLine line : judged.figures()) {
                 if (judged.name().equals(duty.name())
                         && line.form() == TrialForm.THIS_FLEET
+                        && line.reach() == Requirement.Reach.THIS_FLEET_TONIGHT
                         && line.side() == side
                         && line.figure() == figure
                         && line.estimate().point().isPresent()) {

@@ -16,8 +16,9 @@ import turnstone.plant.Requirement;
 record DutyFigure(String name, Function<Frontier, OptionalDouble> of) {
     /** Recovery by the decision for the nearest material. */
     static DutyFigure nearest() {
-        return new DutyFigure("decision recovery", frontier -> OptionalDouble.of(
-                frontier.at(ScoreBins.NEAREST).recovery()));
+        return new DutyFigure(
+                "decision recovery",
+                frontier -> OptionalDouble.of(frontier.at(ScoreBins.NEAREST).recovery()));
     }
 
     /** The other figure at the one that the duty fixes; where it fixes none, {@link #nearest}. */

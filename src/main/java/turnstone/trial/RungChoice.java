@@ -55,8 +55,7 @@ public final class RungChoice {
     }
 
     /** From the scores of every rung on the same showings, in the ladder's order, at the figure of the duty. */
-    public static RungChoice ofScores(
-            Duty duty, Map<Rung, ScoreHistogram> ladder, Iterable<TrialShowing> showings) {
+    public static RungChoice ofScores(Duty duty, Map<Rung, ScoreHistogram> ladder, Iterable<TrialShowing> showings) {
         return of(duty, DutyFigure.of(duty), ladder, showings);
     }
 
@@ -122,9 +121,8 @@ public final class RungChoice {
                     all.add(part);
                 }
             });
-            figures[r++] = all.notShown().isEmpty()
-                    ? figure.of().apply(all.frontier()).orElse(-1)
-                    : -1;
+            figures[r++] =
+                    all.notShown().isEmpty() ? figure.of().apply(all.frontier()).orElse(-1) : -1;
         }
         return figures;
     }
@@ -143,7 +141,8 @@ public final class RungChoice {
         int best = tied.get(0);
         for (int r : tied) {
             int byRidge = Double.compare(rungs.get(r).ridge(), rungs.get(best).ridge());
-            boolean fewer = byRidge == 0 && rungs.get(r).axes() < rungs.get(best).axes();
+            boolean fewer =
+                    byRidge == 0 && rungs.get(r).axes() < rungs.get(best).axes();
             if (byRidge > 0 || fewer) {
                 best = r;
             }
@@ -184,7 +183,7 @@ public final class RungChoice {
                 .map(Rung::name)
                 .distinct()
                 .collect(Collectors.joining(", "));
-        return chosen.name() + ", chosen without each sorter in turn " + same + " of " + chosenWithout.size()
-                + " times" + (others.isEmpty() ? "" : "; else " + others);
+        return chosen.name() + ", chosen without each sorter in turn " + same + " of " + chosenWithout.size() + " times"
+                + (others.isEmpty() ? "" : "; else " + others);
     }
 }

@@ -37,7 +37,11 @@ class VerdictRemarksTest {
     private static FigureLine figure(TrialForm form, Requirement.Figure figure, double value) {
         OptionalDouble none = OptionalDouble.empty();
         return new FigureLine(
-                form, Side.CANDIDATE, figure, new Estimate(OptionalDouble.of(value), none, none, 0.95, none, 4, ""));
+                form,
+                Side.CANDIDATE,
+                figure,
+                Requirement.Reach.THIS_FLEET_TONIGHT,
+                new Estimate(OptionalDouble.of(value), none, none, 0.95, none, 4, ""));
     }
 
     private static Verdict verdict() {
@@ -45,7 +49,7 @@ class VerdictRemarksTest {
                 figure(TrialForm.MACHINE_NOT_SEEN, Requirement.Figure.DECISION_PURITY, 0.5),
                 figure(TrialForm.THIS_FLEET, Requirement.Figure.DECISION_PURITY, 0.9),
                 figure(TrialForm.THIS_FLEET, Requirement.Figure.DECISION_RECOVERY, 0.8));
-        DutyVerdict duty = new DutyVerdict(DUTY, Decision.HOLD, "because", List.of(), figures);
+        DutyVerdict duty = new DutyVerdict(DUTY, Decision.HOLD, "because", List.of(), figures, List.of(), List.of());
         return new Verdict(
                 Decision.HOLD,
                 "because",
