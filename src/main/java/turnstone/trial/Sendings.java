@@ -8,6 +8,7 @@ import java.util.Optional;
 import java.util.SortedSet;
 import java.util.TreeMap;
 import java.util.TreeSet;
+import java.util.function.UnaryOperator;
 import turnstone.plant.Duty;
 
 /**
@@ -96,13 +97,16 @@ final class Sendings {
         return new Sendings(List.copyOf(parts));
     }
 
+    /** The same with every part changed. */
+    Sendings map(UnaryOperator<Part> change) {
+        return new Sendings(parts.stream().map(change).toList());
+    }
+
     /** The same of one sorter alone. */
     Sendings onlySorter(String sorter) {
-        return new Sendings(parts.stream()
-                .map(part -> part.with(part.showings().stream()
-                        .filter(showing -> showing.sorter().equals(sorter))
-                        .toList()))
-                .toList());
+        return map(part -> part.with(part.showings().stream()
+                .filter(showing -> showing.sorter().equals(sorter))
+                .toList()));
     }
 
     /** Every sorter that showed anything of the infeed, by name. */

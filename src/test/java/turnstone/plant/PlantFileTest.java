@@ -233,6 +233,48 @@ class PlantFileTest {
     }
 
     @Test
+    void aDutySaysWhatItFixesGuardsAndLimits() throws IOException {
+        Plant plant = Plant.read(example());
+        DutyTerms terms = plant.duties().get(0).terms();
+        assertThat(terms.required()).hasValue(new Required(Requirement.Figure.DECISION_PURITY, 0.95));
+        assertThat(terms.cut()).isEqualTo(DutyTerms.CutRule.LOWER);
+        assertThat(terms.gain()).isEqualTo(new GainRule(0, 0.95, 5, 2, 4));
+        assertThat(terms.mixDeviation()).containsEntry("PET bottle", 0.03).hasSize(2);
+        assertThat(terms.costs()).hasValue(new DutyTerms.Costs(180, 420));
+        assertThat(terms.guards())
+                .extracting(Guard::name)
+                .containsExactly(
+                        "guard: sorter loss, point",
+                        "guard: purity loss, upper bound",
+                        "guard: quarantined share",
+                        "guard: showings");
+        assertThat(terms.limits()).containsExactly(new PpmLimit("PVC", 50, PpmLimit.Use.REPORT, 0.95));
+        assertThat(plant.duties().get(1).terms()).isEqualTo(DutyTerms.standard());
+        assertThat(changed("days: 5", "days: 6").fingerprint()).isNotEqualTo(plant.fingerprint());
+        assertThat(changed("least: 8}", "least: 9}").fingerprint()).isNotEqualTo(plant.fingerprint());
+    }
+
+    @ParameterizedTest
+    @CsvSource(
+            delimiter = '|',
+            quoteCharacter = '~',
+            value = {
+                "name: sorter loss|name: sorter los|sorter los,|unknown guard `sorter los`, did you mean `sorter loss`?",
+                "most: 0.03, bound|least: 0.03, bound|least: 0.03, bound|takes a limit from the other side; found key `least`",
+                "showings, least: 8|showings, least: 8, bound: point|8, bound: point|guard `showings` has no interval",
+                "purity, share: 0.95|purty, share: 0.95|purty|not a known word, did you mean",
+                "material: PVC, most|material: PET bottle, most|material: PET bottle, most|that is not a target",
+                "material: PVC, most|material: PVV, most|PVV|unknown material `PVV`, did you mean `PVC`?",
+                "above: 0 |abov: 0 |abov: 0|unknown key `abov`, did you mean `above`?",
+                "PET tray: 0.02}|PA: 0.02}|PA: 0.02}|unknown material of the infeed `PA`",
+                "quarantined share, most: 0.02|purity loss, most: 0.02|purity loss, most: 0.02|guard `purity loss` is given twice",
+                "    required: {|    requierd: {|requierd|unknown key `requierd`, did you mean `required`?",
+            })
+    void whatADutyDemandsIsKnownByName(String from, String to, String wrong, String message) {
+        assertThat(fault(from, to, wrong)).contains(message);
+    }
+
+    @Test
     void wavelengthsComeFromAListOrAFileToo() throws IOException {
         StringBuilder lines = new StringBuilder("wavelength_nm\n");
         StringBuilder list = new StringBuilder();
