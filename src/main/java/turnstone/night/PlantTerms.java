@@ -1,9 +1,11 @@
 package turnstone.night;
 
 import com.fasterxml.jackson.databind.JsonNode;
+import com.fasterxml.jackson.databind.node.ObjectNode;
 import java.util.List;
 import turnstone.decide.Model;
 import turnstone.fault.Fault;
+import turnstone.json.Json;
 import turnstone.plant.Plant;
 
 /** What a model must share with a plant to run in it: count scale, wavelength axis, pretreatment head. */
@@ -30,20 +32,33 @@ public final class PlantTerms {
         }
         JsonNode theirs = model.pretreatment().path("head");
         JsonNode ours = plant.head().json();
-        if (!theirs.path("axis_nm").equals(ours.path("axis_nm"))) {
+        if (!same(theirs.path("axis_nm"), ours.path("axis_nm"))) {
             throw Fault.input(role + " is on another wavelength axis than the plant file")
                     .at(place)
                     .found(axis(theirs.path("axis_nm")))
                     .expected(axis(ours.path("axis_nm")))
                     .remedy(REMEDY);
         }
-        if (!theirs.equals(ours)) {
+        if (!same(theirs, ours)) {
             throw Fault.input(role + " was made with another pretreatment head than the plant file's")
                     .at(place)
                     .found(theirs)
                     .expected(ours)
                     .remedy(REMEDY);
         }
+    }
+
+    /** By canonical form: a number read from a file is the same number as one that never was in a file. */
+    private static boolean same(JsonNode left, JsonNode right) {
+        return Json.fingerprint(content(left)).equals(Json.fingerprint(content(right)));
+    }
+
+    private static ObjectNode content(JsonNode node) {
+        ObjectNode content = Json.object();
+        if (!node.isMissingNode()) {
+            content.set("content", node);
+        }
+        return content;
     }
 
     private static String axis(JsonNode axis_nm) {

@@ -245,6 +245,19 @@ class ShelfCommandsTest {
     }
 
     @Test
+    void wholeNumbersOfTheHeadAreTheSameInTheFile() throws IOException {
+        String plant = PLANT.replace("ledger: ledger", "ledger: ledger-2")
+                .replace("channels: 3\n", "axis: {first_nm: 1000, last_nm: 1200, channels: 3}\n")
+                .replace("input: absorbance}", "input: counts, head: {saturatedAt: 16383, deadAtOrBelow: 0}}");
+        Files.writeString(plantFile(), plant);
+        Ledger ledger = Places.ledger(Plant.read(plantFile()));
+        ledger.post(LedgerFixture.draft(MONDAY, "mon", 1), Replace.NO);
+        release(refit("1e-3"));
+        // The next one looks at what is in service.
+        release(refit("1e-2"));
+    }
+
+    @Test
     void anAuditIsEnteredAndListed() {
         String[] add = {"audit", "add", "--date", "2026-03-14", "--duty", "bottles", "--mass", "PET bottle=97.5,PP=2.5"
         };
