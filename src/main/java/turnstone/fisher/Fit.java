@@ -27,7 +27,16 @@ public final class Fit {
      *     only a ridge can keep out; where there are fewer than two materials or one has no records
      */
     public static Fit of(FitRequest request) {
-        return Scatter.of(request).fit(request.ridge(), request.rank());
+        return of(request, ScatterMemo.nothing());
+    }
+
+    /**
+     * The same fit, the scatter of cells met before taken from a memo.
+     *
+     * @throws turnstone.fault.Fault as {@link #of(FitRequest)}
+     */
+    public static Fit of(FitRequest request, ScatterMemo memo) {
+        return Scatter.of(request, memo).fit(request.ridge(), request.rank());
     }
 
     /**

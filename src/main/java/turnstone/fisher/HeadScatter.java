@@ -22,12 +22,12 @@ final class HeadScatter {
         this.deviations = deviations;
     }
 
-    static HeadScatter of(CountScale scale, Parts parts) {
+    static HeadScatter of(CountScale scale, Parts parts, ScatterMemo memo) {
         int d = scale.channels();
         ExtendedMatrix within = new ExtendedMatrix(d, d);
         ExtendedMatrix deviations = new ExtendedMatrix(parts.materials(), d);
         for (int k = 0; k < parts.materials(); k++) {
-            addMaterial(parts, k, within, deviations);
+            addMaterial(parts, k, memo, within, deviations);
         }
         scaleToUnits(scale, within, deviations);
         return new HeadScatter(scale, parts, within, deviations);
@@ -38,15 +38,16 @@ final class HeadScatter {
         int d = scale.channels();
         ExtendedMatrix alone = new ExtendedMatrix(d, d);
         ExtendedMatrix unused = new ExtendedMatrix(parts.materials(), d);
-        addMaterial(parts, material, alone, unused);
+        addMaterial(parts, material, ScatterMemo.nothing(), alone, unused);
         scaleToUnits(scale, alone, unused);
         return alone;
     }
 
-    private static void addMaterial(Parts parts, int k, ExtendedMatrix within, ExtendedMatrix deviations) {
+    private static void addMaterial(
+            Parts parts, int k, ScatterMemo memo, ExtendedMatrix within, ExtendedMatrix deviations) {
         DoubleDouble all = DoubleDouble.of(parts.weightedRecords(k));
         for (Part part : parts.of(k)) {
-            ExactDeviations.addScatter(part, within);
+            memo.of(part.moments()).addTo(within, part.weight());
             DoubleDouble share = DoubleDouble.of(part.weightedRecords()).over(all);
             ExactDeviations.addMean(part.moments(), parts.total(), deviations, k, share);
         }

@@ -37,7 +37,7 @@ final class Parts {
      *
      * @throws Fault of kind input where there are fewer than two materials, or one has no records
      */
-    static Parts of(FitRequest request) {
+    static Parts of(FitRequest request, ScatterMemo memo) {
         if (request.materials().size() < 2) {
             throw Fault.input("nothing to tell apart")
                     .found(request.materials().size() + " material")
@@ -45,7 +45,7 @@ final class Parts {
         }
         List<Map<Double, Moments>> merged = new ArrayList<>();
         for (int k = 0; k < request.materials().size(); k++) {
-            merged.add(byWeight(request, k));
+            merged.add(byWeight(request, k, memo));
         }
         int channels = request.scale().channels();
         Totals total = new Totals(channels);
@@ -68,11 +68,11 @@ final class Parts {
         return new Parts(parts, total);
     }
 
-    private static Map<Double, Moments> byWeight(FitRequest request, int material) {
+    private static Map<Double, Moments> byWeight(FitRequest request, int material, ScatterMemo memo) {
         Map<Double, Moments> sums = new TreeMap<>();
         for (Cell cell : request.cells().get(material)) {
             if (cell.moments().records() > 0) {
-                sums.merge(cell.weight(), cell.moments(), Moments::plus);
+                sums.merge(cell.weight(), cell.moments(), memo::plus);
             }
         }
         if (sums.isEmpty()) {

@@ -26,7 +26,16 @@ public final class Scatter {
      * @throws turnstone.fault.Fault of kind input where there are fewer than two materials or one has no records
      */
     public static Scatter of(FitRequest request) {
-        return new Scatter(request, HeadScatter.of(request.scale(), Parts.of(request)));
+        return of(request, ScatterMemo.nothing());
+    }
+
+    /**
+     * Forms the scatter, that of cells met before taken from a memo.
+     *
+     * @throws turnstone.fault.Fault as {@link #of(FitRequest)}
+     */
+    public static Scatter of(FitRequest request, ScatterMemo memo) {
+        return new Scatter(request, HeadScatter.of(request.scale(), Parts.of(request, memo), memo));
     }
 
     /** The same sums through another tail. */

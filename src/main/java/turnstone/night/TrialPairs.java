@@ -1,6 +1,5 @@
 package turnstone.night;
 
-import java.util.ArrayList;
 import java.util.Collection;
 import java.util.List;
 import java.util.Map;
@@ -24,7 +23,11 @@ import turnstone.trial.TrialModels;
  */
 final class TrialPairs {
     /** One side of a trial: how it is made, and from what. */
-    record Maker(Recipe recipe, WindowSums sums) {}
+    record Maker(Recipe recipe, WindowSums sums) {
+        Maker sharing() {
+            return new Maker(recipe, sums.sharing());
+        }
+    }
 
     private record Seat(int trayGroup, String instrument) implements Comparable<Seat> {
         HeldOut heldOut() {
@@ -58,13 +61,17 @@ final class TrialPairs {
             seats.add(new Seat(showing.trayGroup(), ""));
             seats.add(new Seat(showing.trayGroup(), showing.instrument()));
         }
-        List<Seat> order = new ArrayList<>(seats);
-        Map<Seat, Made> made = order.parallelStream()
-                .collect(Collectors.toMap(
-                        seat -> seat,
-                        seat -> pair(maker, candidate, inService, seat.heldOut()),
-                        (a, b) -> a,
-                        TreeMap::new));
+        Map<Seat, Made> made = new TreeMap<>();
+        for (int group : seats.stream().map(Seat::trayGroup).distinct().toList()) {
+            // Group by group: the fits of one group share what is formed of the sums without it, and no more is held
+            // than that.
+            List<Seat> ofGroup =
+                    seats.stream().filter(seat -> seat.trayGroup() == group).toList();
+            Maker ours = candidate.sharing();
+            Optional<Maker> theirs = inService.map(Maker::sharing);
+            made.putAll(ofGroup.parallelStream()
+                    .collect(Collectors.toMap(seat -> seat, seat -> pair(maker, ours, theirs, seat.heldOut()))));
+        }
         TrialModels.Builder builder = TrialModels.builder();
         SortedSet<String> seenWhole = new TreeSet<>();
         SortedSet<String> oneMachineOnly = new TreeSet<>();

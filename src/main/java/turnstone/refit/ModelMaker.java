@@ -101,7 +101,7 @@ public final class ModelMaker {
                 .withBetweenShares(betweenShares(recipe, there.size()))
                 .withRoundedSource(head.computes() ? RoundedSource.ROUNDED : RoundedSource.LOSSLESS)
                 .withChannelNames(channels);
-        Fit fit = Fit.of(request);
+        Fit fit = Fit.of(request, sums.scatters());
         Optional<Model> guide = orientedTo.filter(other -> other.channels().equals(channels));
         Fit oriented = guide.map(other -> Orientation.of(fit, other.axes(), Orientation.Manner.SIGNS)
                         .turned())

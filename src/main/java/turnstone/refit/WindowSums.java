@@ -5,13 +5,16 @@ import java.util.Collections;
 import java.util.HashMap;
 import java.util.List;
 import java.util.Map;
+import java.util.Set;
 import java.util.SortedMap;
 import java.util.SortedSet;
 import java.util.TreeMap;
 import java.util.TreeSet;
+import java.util.concurrent.ConcurrentHashMap;
 import java.util.function.Function;
 import turnstone.fault.Fault;
 import turnstone.fisher.Cell;
+import turnstone.fisher.ScatterMemo;
 import turnstone.ledger.DayEntry;
 import turnstone.ledger.Ledger;
 import turnstone.ledger.LedgerKey;
@@ -35,6 +38,12 @@ public final class WindowSums {
         }
     }
 
+    /** A cell less tray groups, formed by subtraction. */
+    private record Formed(String material, String instrument, Set<Integer> trayGroups) {}
+
+    /** What {@link #sharing} may hold at most, as a part of the memory that there is. */
+    private static final int SHARE_OF_MEMORY = 8;
+
     private final List<DayEntry> days;
     private final int channels;
     private final SortedMap<LedgerKey, Moments> cells;
@@ -42,6 +51,10 @@ public final class WindowSums {
     private final Map<String, Moments> byMaterial;
     private final SortedMap<Part<Integer>, Moments> byGroup;
     private final SortedMap<Part<String>, Moments> byInstrument;
+    /** Null where nothing is shared. */
+    private final Map<Formed, Moments> formed;
+
+    private final ScatterMemo scatters;
 
     private WindowSums(
             List<DayEntry> days,
@@ -55,6 +68,35 @@ public final class WindowSums {
         this.byMaterial = totals(LedgerKey::material);
         this.byGroup = totals(key -> new Part<>(key.material(), key.trayGroup()));
         this.byInstrument = totals(key -> new Part<>(key.material(), key.instrument()));
+        this.formed = null;
+        this.scatters = new ScatterMemo(0);
+    }
+
+    private WindowSums(WindowSums same, Map<Formed, Moments> formed, ScatterMemo scatters) {
+        this.days = same.days;
+        this.channels = same.channels;
+        this.cells = same.cells;
+        this.showings = same.showings;
+        this.byMaterial = same.byMaterial;
+        this.byGroup = same.byGroup;
+        this.byInstrument = same.byInstrument;
+        this.formed = formed;
+        this.scatters = scatters;
+    }
+
+    /**
+     * The same sums, which keep what they form for a fit, so that further fits without the same tray groups find it there. For as long as
+     * those fits take: it holds a copy of about (instruments × materials) moments and the scatter of each, within an eighth of the memory
+     * that there is. For many threads; numbers are the same as without.
+     */
+    public WindowSums sharing() {
+        long most_bytes = Runtime.getRuntime().maxMemory() / SHARE_OF_MEMORY;
+        return new WindowSums(this, new ConcurrentHashMap<>(), new ScatterMemo(most_bytes));
+    }
+
+    /** Where fits look for scatter that was formed before. */
+    ScatterMemo scatters() {
+        return scatters;
     }
 
     /**
@@ -147,7 +189,7 @@ public final class WindowSums {
         for (Map.Entry<Part<String>, Moments> entry : byInstrument.entrySet()) {
             Part<String> part = entry.getKey();
             if (part.material().equals(material) && !heldOut.instruments().contains(part.of())) {
-                Moments moments = withoutGroups(entry.getValue(), material, part.of(), heldOut);
+                Moments moments = formed(entry.getValue(), material, part.of(), heldOut);
                 if (moments.records() > 0) {
                     kept.add(moments);
                 }
@@ -157,6 +199,15 @@ public final class WindowSums {
         return kept.stream()
                 .map(moments -> new Cell(moments, mean / moments.records()))
                 .toList();
+    }
+
+    private Moments formed(Moments ofInstrument, String material, String instrument, HeldOut heldOut) {
+        if (formed == null) {
+            return withoutGroups(ofInstrument, material, instrument, heldOut);
+        }
+        return formed.computeIfAbsent(
+                new Formed(material, instrument, heldOut.trayGroups()),
+                key -> withoutGroups(ofInstrument, material, instrument, heldOut));
     }
 
     /** The total less its groups, less its instruments, plus what was taken out twice. */
@@ -178,6 +229,9 @@ public final class WindowSums {
     }
 
     private Moments withoutGroups(Moments ofInstrument, String material, String instrument, HeldOut heldOut) {
+        if (heldOut.trayGroups().isEmpty()) {
+            return ofInstrument;
+        }
         MomentsAccumulator sum = MomentsAccumulator.empty(channels).merge(ofInstrument);
         for (int group : heldOut.trayGroups()) {
             Moments cell = cells.get(new LedgerKey(instrument, material, group));
