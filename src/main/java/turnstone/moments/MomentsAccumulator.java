@@ -1,6 +1,7 @@
 package turnstone.moments;
 
 import java.math.BigInteger;
+import java.nio.ByteBuffer;
 
 /**
  * Adds up moments in place: the left side changes, the right does not. Shapes and counts are checked before anything changes. Not for sharing
@@ -70,9 +71,7 @@ public final class MomentsAccumulator {
             throw new IllegalArgumentException("can't take " + other.records() + " records out of " + records);
         }
         for (int i = 0; i < channels; i++) {
-            BigInteger product = products.value(Bounds.at(i, i)).subtract(other.product(i, i));
-            BigInteger sum = sums.value(i).subtract(other.sum(i));
-            if (!possible(left, sum, product)) {
+            if (!leavesPossible(left, i, other)) {
                 throw new IllegalArgumentException(
                         "these records are not among those that they are taken out of: channel " + i
                                 + " would have a scatter below zero");
@@ -89,12 +88,43 @@ public final class MomentsAccumulator {
         return new Moments(channels, records, sums.copy(), products.copy());
     }
 
-    /** Whether any records can have this sum and sum of squares: {@code n P - s s >= 0}, and nothing but zeros without records. */
-    static boolean possible(long records, BigInteger sum, BigInteger squares) {
+    private boolean leavesPossible(long left, int channel, Moments other) {
+        int square = Bounds.at(channel, channel);
+        long sumLow = sums.low(channel) - other.sumLow(channel);
+        long sumHigh = sums.high(channel) - other.sumHigh(channel) - borrow(sums.low(channel), other.sumLow(channel));
+        long squaresLow = products.low(square) - other.productLow(channel, channel);
+        long squaresHigh = products.high(square)
+                - other.productHigh(channel, channel)
+                - borrow(products.low(square), other.productLow(channel, channel));
+        return possible(left, sumHigh, sumLow, squaresHigh, squaresLow);
+    }
+
+    private static long borrow(long from, long taken) {
+        return Long.compareUnsigned(from, taken) < 0 ? 1 : 0;
+    }
+
+    /**
+     * Whether any records can have this sum and sum of squares, 128 bits each: {@code n P - s s >= 0}, and nothing but zeros without
+     * records.
+     */
+    static boolean possible(long records, long sumHigh, long sumLow, long squaresHigh, long squaresLow) {
         if (records == 0) {
-            return sum.signum() == 0 && squares.signum() == 0;
+            return (sumHigh | sumLow | squaresHigh | squaresLow) == 0;
         }
+        boolean words = sumHigh == sumLow >> 63 && squaresHigh == 0 && squaresLow >= 0;
+        if (words) {
+            // Both products are below 2^126.
+            long most = Math.multiplyHigh(records, squaresLow);
+            long least = Math.multiplyHigh(sumLow, sumLow);
+            return most != least ? most > least : Long.compareUnsigned(records * squaresLow, sumLow * sumLow) >= 0;
+        }
+        BigInteger sum = wide(sumHigh, sumLow);
+        BigInteger squares = wide(squaresHigh, squaresLow);
         return BigInteger.valueOf(records).multiply(squares).compareTo(sum.multiply(sum)) >= 0;
+    }
+
+    private static BigInteger wide(long high, long low) {
+        return new BigInteger(ByteBuffer.allocate(16).putLong(high).putLong(low).array());
     }
 
     private void checkChannels(Moments other) {

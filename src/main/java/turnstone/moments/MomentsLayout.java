@@ -102,7 +102,12 @@ final class MomentsLayout {
         checkRange("bytes of a sum", sumWidth, width(moments.sums()), width(moments.sums()));
         checkRange("bytes of a product", productWidth, width(moments.products()), width(moments.products()));
         for (int i = 0; i < moments.channels(); i++) {
-            if (!MomentsAccumulator.possible(moments.records(), moments.sum(i), moments.product(i, i))) {
+            if (!MomentsAccumulator.possible(
+                    moments.records(),
+                    moments.sumHigh(i),
+                    moments.sumLow(i),
+                    moments.productHigh(i, i),
+                    moments.productLow(i, i))) {
                 throw broken("no records have such sums").found("a scatter below zero in channel " + i);
             }
         }
@@ -139,25 +144,51 @@ final class MomentsLayout {
     }
 
     private static void put(ByteBuffer out, WideSums values, int width) {
-        for (int i = 0; i < values.length(); i++) {
-            for (int b = width - 1; b >= 0; b--) {
-                out.put((byte) (b >= 8 ? values.high(i) >> (8 * b - 64) : values.low(i) >> (8 * b)));
+        int at = out.position();
+        for (int i = 0; i < values.length(); i++, at += width) {
+            if (at + WIDEST > out.limit()) {
+                putBytes(out, at, values.high(i), values.low(i), width);
+            } else if (width <= Long.BYTES) {
+                // Writes past the value; what follows it is written later.
+                out.putLong(at, values.low(i) << (Long.SIZE - Byte.SIZE * width));
+            } else {
+                int upper = width - Long.BYTES;
+                out.putLong(at, values.high(i) << (Long.SIZE - Byte.SIZE * upper));
+                out.putLong(at + upper, values.low(i));
             }
+        }
+        out.position(at);
+    }
+
+    private static void putBytes(ByteBuffer out, int at, long high, long low, int width) {
+        for (int b = width - 1; b >= 0; b--) {
+            out.put(at + width - 1 - b, (byte)
+                    (b >= Long.BYTES ? high >> (Byte.SIZE * (b - Long.BYTES)) : low >> (Byte.SIZE * b)));
         }
     }
 
+    /** Each value is the end of eight bytes, or of twice eight: there are always so many before it, the header's among them. */
     private static WideSums take(ByteBuffer in, int length, int width) {
         WideSums values = new WideSums(length);
-        for (int i = 0; i < length; i++) {
-            long low = in.get();
-            long high = low >> 63;
-            for (int b = 1; b < width; b++) {
-                high = high << 8 | low >>> 56;
-                low = low << 8 | (in.get() & 0xff);
+        int at = in.position();
+        for (int i = 0; i < length; i++, at += width) {
+            long last = in.getLong(at + width - Long.BYTES);
+            if (width <= Long.BYTES) {
+                long low = extended(last, width);
+                values.set(i, low >> (Long.SIZE - 1), low);
+            } else {
+                int upper = width - Long.BYTES;
+                values.set(i, extended(in.getLong(at + upper - Long.BYTES), upper), last);
             }
-            values.set(i, high, low);
         }
+        in.position(at);
         return values;
+    }
+
+    /** The last bytes of a word with their sign. */
+    private static long extended(long word, int bytes) {
+        int shift = Long.SIZE - Byte.SIZE * bytes;
+        return word << shift >> shift;
     }
 
     private static int checksum(byte[] bytes) {
