@@ -173,11 +173,12 @@ public final class SamplePlant {
 
     /** The records of a showing. */
     public List<SampleRecord> records(SampleShowing showing) {
-        boolean stray = showing.sorter().equals(Traps.UNKNOWN_SORTER);
-        SampleShowing.Place place = showing.place();
-        return new Scene(
-                        seed, showing, stray ? 1 : size.recordsPerShowing(), light.night(place.sorter(), place.night()))
-                .records();
+        return maker().records(showing);
+    }
+
+    /** What makes the records of many showings quickly. */
+    public SampleMaker maker() {
+        return new SampleMaker(seed, size, light);
     }
 
     /** The dark and white references of a night. */

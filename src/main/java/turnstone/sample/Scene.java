@@ -1,6 +1,7 @@
 package turnstone.sample;
 
 import java.util.ArrayList;
+import java.util.Arrays;
 import java.util.List;
 
 /** Makes the records of one showing: pieces on the belt, light on them, counts of the detector. */
@@ -12,35 +13,28 @@ final class Scene {
     private static final double READ_NOISE_COUNTS = 8;
     private static final double SHOT_NOISE_VARIANCE_PER_COUNT = 0.12;
     private static final double BLACK_REFLECTANCE = 0.022;
-    private static final double LN_10 = StrictMath.log(10);
 
     private final SampleShowing showing;
     private final int records;
-    private final Light.Night light;
-    private final Substance substance;
+    private final Optics optics;
+    private final Transmittance transmittance;
     private final List<Piece> pieces;
     private final double[][] bands;
-    private final double[] water;
-    private final double[] paper;
-    private final double[] belt;
-    private final double[] across;
     private final Chance chance;
     private final double[] drift;
+    private final double[] noise;
 
-    Scene(long seed, SampleShowing showing, int records, Light.Night light) {
+    Scene(long seed, SampleShowing showing, int records, Optics optics) {
         SampleShowing.Place place = showing.place();
-        double[] wavelength_nm = light.wavelength_nm;
+        int channels = optics.across.length;
         this.showing = showing;
         this.records = records;
-        this.light = light;
-        this.substance = Substance.ALL.get(place.material());
+        this.optics = optics;
+        this.transmittance = new Transmittance(channels);
         this.pieces = Piece.onTray(seed, place.material(), place.tray());
-        this.bands = Band.table(substance.bands(), wavelength_nm);
-        this.water = Band.sum(Substance.WATER, wavelength_nm);
-        this.paper = reflectance(Substance.named("fibre"), wavelength_nm);
-        this.belt = reflectance(Substance.named("belt"), wavelength_nm);
-        this.across = new double[wavelength_nm.length];
-        this.drift = new double[wavelength_nm.length];
+        this.bands = optics.bands(place.material());
+        this.drift = new double[channels];
+        this.noise = new double[channels];
         this.chance = Chance.of(
                 seed,
                 Fleet.Stream.RECORDS,
@@ -51,23 +45,14 @@ final class Scene {
                 place.showing());
         double level = 1 + 0.01 * chance.normal();
         double tilt = 0.012 * chance.normal();
-        for (int c = 0; c < across.length; c++) {
-            across[c] = (wavelength_nm[c] - 1300) / 400;
-            drift[c] = level + tilt * across[c];
+        for (int c = 0; c < channels; c++) {
+            drift[c] = level + tilt * optics.across[c];
         }
-    }
-
-    private static double[] reflectance(Substance substance, double[] wavelength_nm) {
-        double[] values = Band.sum(substance.bands(), wavelength_nm);
-        for (int c = 0; c < values.length; c++) {
-            values[c] = StrictMath.exp(-LN_10 * (substance.base() + values[c]));
-        }
-        return values;
     }
 
     List<SampleRecord> records() {
         List<SampleRecord> made = new ArrayList<>(records);
-        double[] reflectance = new double[across.length];
+        double[] reflectance = new double[drift.length];
         for (int r = 0; r < records; r++) {
             Piece piece = pieces.get(r % pieces.size());
             int beltColumn = chance.below(Light.BELT_COLUMNS);
@@ -95,15 +80,37 @@ final class Scene {
         double[] heights = piece.bandFactors().stream()
                 .mapToDouble(factor -> path * factor)
                 .toArray();
-        for (int c = 0; c < reflectance.length; c++) {
-            double own = dark;
-            if (!piece.black()) {
-                double absorbance = base + slope * across[c] + wet * water[c];
-                for (int b = 0; b < bands.length; b++) {
-                    absorbance += heights[b] * bands[b][c];
-                }
-                own = StrictMath.exp(-LN_10 * absorbance);
+        if (piece.black()) {
+            Arrays.fill(reflectance, dark);
+        } else {
+            absorb(base, slope, wet, heights, reflectance);
+            transmittance.apply(reflectance);
+        }
+        mix(reflectance, labelled, beside, gloss);
+    }
+
+    // The loops below run over plain arrays from 0, one thing at a time, so that compilers make vector code of them.
+
+    private void absorb(double base, double slope, double wet, double[] heights, double[] absorbance) {
+        double[] across = optics.across;
+        double[] water = optics.water;
+        for (int c = 0; c < absorbance.length; c++) {
+            absorbance[c] = base + slope * across[c] + wet * water[c];
+        }
+        for (int b = 0; b < bands.length; b++) {
+            double height = heights[b];
+            double[] band = bands[b];
+            for (int c = 0; c < absorbance.length; c++) {
+                absorbance[c] += height * band[c];
             }
+        }
+    }
+
+    private void mix(double[] reflectance, double labelled, double beside, double gloss) {
+        double[] paper = optics.paper;
+        double[] belt = optics.belt;
+        for (int c = 0; c < reflectance.length; c++) {
+            double own = reflectance[c];
             own += labelled * (paper[c] - own);
             own += beside * (belt[c] - own);
             reflectance[c] = own + gloss;
@@ -111,16 +118,25 @@ final class Scene {
     }
 
     private int[] detect(double[] reflectance, int beltColumn) {
-        double[] dark = light.dark[beltColumn];
-        double[] white = light.white[beltColumn];
-        double stray = light.stray;
+        for (int c = 0; c < noise.length; c++) {
+            noise[c] = chance.pixelNoise();
+        }
+        expose(reflectance, optics.light.white[beltColumn], optics.light.dark[beltColumn]);
         int[] counts = new int[reflectance.length];
         for (int c = 0; c < counts.length; c++) {
-            double signal = white[c] * drift[c] * (reflectance[c] + stray) / (1 + stray);
-            double noise = Math.sqrt(READ_NOISE_COUNTS * READ_NOISE_COUNTS + SHOT_NOISE_VARIANCE_PER_COUNT * signal);
-            double count = Math.rint(dark[c] + signal + noise * chance.pixelNoise());
-            counts[c] = (int) Math.max(1, Math.min(LARGEST_COUNT, count));
+            counts[c] = (int) Math.max(1, Math.min(LARGEST_COUNT, Math.rint(reflectance[c])));
         }
         return counts;
+    }
+
+    /** Reflectance to what the detector sees, noise included, in place. */
+    private void expose(double[] values, double[] white, double[] dark) {
+        double stray = optics.light.stray;
+        for (int c = 0; c < values.length; c++) {
+            double signal = white[c] * drift[c] * (values[c] + stray) / (1 + stray);
+            double deviation =
+                    Math.sqrt(READ_NOISE_COUNTS * READ_NOISE_COUNTS + SHOT_NOISE_VARIANCE_PER_COUNT * signal);
+            values[c] = dark[c] + signal + deviation * noise[c];
+        }
     }
 }

@@ -4,10 +4,7 @@ import java.io.IOException;
 import java.io.UncheckedIOException;
 import java.nio.file.Files;
 import java.nio.file.Path;
-import java.util.Comparator;
-import java.util.List;
 import java.util.Map;
-import java.util.stream.Stream;
 import org.apache.spark.api.java.JavaSparkContext;
 import org.apache.spark.sql.SparkSession;
 
@@ -115,11 +112,8 @@ public final class Session implements AutoCloseable {
     }
 
     private static void remove(Path folder) {
-        try (Stream<Path> below = Files.walk(folder)) {
-            List<Path> deepestFirst = below.sorted(Comparator.reverseOrder()).toList();
-            for (Path path : deepestFirst) {
-                Files.deleteIfExists(path);
-            }
+        try {
+            FileTree.delete(folder);
         } catch (IOException e) {
             throw new UncheckedIOException(e);
         }
