@@ -6,9 +6,12 @@ import java.util.Collection;
 import java.util.List;
 import java.util.Optional;
 import turnstone.decide.Model;
+import turnstone.ledger.DayCounts;
 import turnstone.ledger.DayEntry;
 import turnstone.ledger.Ledger;
 import turnstone.ledger.ShowingSums;
+import turnstone.measure.QuarantineReason;
+import turnstone.plant.Guard;
 import turnstone.plant.Plant;
 import turnstone.refit.ModelMaker;
 import turnstone.refit.Recipe;
@@ -17,6 +20,7 @@ import turnstone.refit.WindowSums;
 import turnstone.spark.TrialJob;
 import turnstone.spark.TrialTallies;
 import turnstone.trial.Judge;
+import turnstone.trial.NightFacts;
 import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
 import turnstone.trial.TrialResult;
@@ -56,7 +60,8 @@ public final class TrialStep {
         Collection<ShowingSums> showings = ledger.showings(posted).values();
         TrialResult.Builder result = TrialResult.of(
                         contest.candidate().fingerprint(), contest.inService().map(Model::fingerprint))
-                .showings(trialShowings(day.day(), showings));
+                .showings(trialShowings(day.day(), showings))
+                .facts(facts(posted, contest.candidate()));
         List<DayEntry> before =
                 Window.before(ledger, day.day(), contest.recipe().window_days());
         Optional<String> obstacle = obstacle(day.day(), before, contest.inService());
@@ -111,6 +116,20 @@ public final class TrialStep {
                         .findFirst())
                 .map(seen -> "what is in service was made from " + seen + ", which is not before " + day
                         + "; only a later day can judge it");
+    }
+
+    /** What guards ask for that the day and the candidate say. */
+    private static NightFacts facts(DayEntry posted, Model candidate) {
+        DayCounts counts = posted.counts();
+        NightFacts facts =
+                NightFacts.none().with(Guard.Kind.RECIPROCAL_CONDITION, candidate.reciprocalCondition());
+        if (counts.read() == 0) {
+            return facts;
+        }
+        long stale = counts.quarantined().getOrDefault(QuarantineReason.STALE_WHITE.label(), 0L);
+        double read = counts.read();
+        return facts.with(Guard.Kind.QUARANTINED_SHARE, counts.quarantinedTotal() / read)
+                .with(Guard.Kind.STALE_WHITE_SHARE, stale / read);
     }
 
     private static List<TrialShowing> trialShowings(LocalDate day, Collection<ShowingSums> showings) {
