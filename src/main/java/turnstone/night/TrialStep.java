@@ -121,8 +121,7 @@ public final class TrialStep {
     /** What guards ask for that the day and the candidate say. */
     private static NightFacts facts(DayEntry posted, Model candidate) {
         DayCounts counts = posted.counts();
-        NightFacts facts =
-                NightFacts.none().with(Guard.Kind.RECIPROCAL_CONDITION, candidate.reciprocalCondition());
+        NightFacts facts = NightFacts.none().with(Guard.Kind.RECIPROCAL_CONDITION, candidate.reciprocalCondition());
         if (counts.read() == 0) {
             return facts;
         }

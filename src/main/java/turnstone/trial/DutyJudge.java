@@ -46,7 +46,7 @@ final class DutyJudge {
                 results.add(limit(limit, bound));
             }
         }
-        return DutyVerdict.of(duty.name(), results, figures(), bounds, costs());
+        return DutyVerdict.of(duty.name(), results, figures(), bounds, costs(), notes());
     }
 
     /** What one side sent: at its cut where one was set on earlier days, else by the decision for the nearest material. */
@@ -220,6 +220,21 @@ final class DutyJudge {
         return form == TrialForm.THIS_FLEET
                 ? List.of(Requirement.Reach.THIS_FLEET_TONIGHT)
                 : List.of(Requirement.Reach.MACHINES_LIKE_THESE, Requirement.Reach.ONE_NEW_MACHINE);
+    }
+
+    /** Sorters of the duty that showed nothing: nothing is said of them. */
+    private List<String> notes() {
+        TreeSet<String> showed = new TreeSet<>();
+        showings.values().forEach(showing -> showed.add(showing.sorter()));
+        List<String> absent = duty.sorters().stream()
+                .filter(sorter -> !showed.contains(sorter))
+                .toList();
+        if (absent.isEmpty() || showings.isEmpty()) {
+            return List.of();
+        }
+        String half = 2 * absent.size() >= duty.sorters().size() ? "half of the duty's sorters or more: " : "";
+        return List.of(
+                half + "no showing on " + String.join(", ", absent) + "; nothing here speaks for what was not shown");
     }
 
     private List<CostLine> costs() {

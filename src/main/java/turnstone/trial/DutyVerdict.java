@@ -18,6 +18,7 @@ import turnstone.json.Json;
  * @param figures what was found, for each form and side
  * @param bounds on single materials in the product
  * @param costs of what goes astray, for each side; empty where the duty names none
+ * @param notes what a reader must know of the showings
  */
 public record DutyVerdict(
         String name,
@@ -26,13 +27,15 @@ public record DutyVerdict(
         List<RequirementResult> requirements,
         List<FigureLine> figures,
         List<PpmBound> bounds,
-        List<CostLine> costs) {
+        List<CostLine> costs,
+        List<String> notes) {
     /** Keeps copies. */
     public DutyVerdict {
         requirements = List.copyOf(requirements);
         figures = List.copyOf(figures);
         bounds = List.copyOf(bounds);
         costs = List.copyOf(costs);
+        notes = List.copyOf(notes);
     }
 
     static DutyVerdict of(
@@ -40,7 +43,8 @@ public record DutyVerdict(
             List<RequirementResult> requirements,
             List<FigureLine> figures,
             List<PpmBound> bounds,
-            List<CostLine> costs) {
+            List<CostLine> costs,
+            List<String> notes) {
         boolean release = !requirements.isEmpty() && requirements.stream().allMatch(RequirementResult::met);
         return new DutyVerdict(
                 name,
@@ -49,7 +53,8 @@ public record DutyVerdict(
                 requirements,
                 figures,
                 bounds,
-                costs);
+                costs,
+                notes);
     }
 
     private static String mainReason(List<RequirementResult> requirements) {
@@ -94,6 +99,8 @@ public record DutyVerdict(
         bounds.forEach(bound -> limits.add(bound.json()));
         ObjectNode money = node.putObject("costs_perTonne");
         costs.forEach(line -> money.put(line.side() == Side.CANDIDATE ? "candidate" : "inService", line.perTonne()));
+        ArrayNode remarks = node.putArray("notes");
+        notes.forEach(remarks::add);
         return node;
     }
 }

@@ -18,7 +18,7 @@ final class GainJudge {
     }
 
     static String name(String figure) {
-        return "gain over in service: " + figure + ", lower bound";
+        return "gain in " + figure + ", lower bound";
     }
 
     static String bound(GainRule rule) {

@@ -42,6 +42,7 @@ final class VerdictText {
         if (!said.equals(duty.name() + ": " + duty.mainReason())) {
             wrap(page, "  ", duty.mainReason() + ".");
         }
+        duty.notes().forEach(note -> wrap(page, "  ", note + "."));
         for (RequirementResult requirement : duty.requirements()) {
             append(page, requirement);
         }
@@ -122,7 +123,7 @@ final class VerdictText {
 
     /** {@code +1.20 points}. */
     static String points(double difference) {
-        return String.format(Locale.ROOT, "%+.2f points", 100 * difference);
+        return difference == 0 ? "0.00 points" : String.format(Locale.ROOT, "%+.2f points", 100 * difference);
     }
 
     private static String brief(String fingerprint) {

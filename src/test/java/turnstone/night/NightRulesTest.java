@@ -100,7 +100,7 @@ class NightRulesTest {
                 .flatExtracting(DutyVerdict::requirements)
                 .extracting(RequirementResult::name)
                 .hasSize(5)
-                .noneMatch(name -> name.startsWith("gain over in service"));
+                .noneMatch(name -> name.startsWith("gain in "));
         assertThat(result.verdict().decision()).isEqualTo(Decision.RELEASE);
         assertThat(result.released()).isEmpty();
         assertThat(Places.shelf(plant).inService()).isEmpty();

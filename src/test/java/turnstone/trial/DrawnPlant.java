@@ -128,6 +128,17 @@ final class DrawnPlant {
         return figures(side, high)[1];
     }
 
+    /** Whether the true purity of what is in service, at a cut of {@link ScoreBins}, is what the duty requires. */
+    boolean holdsPurity(int cut) {
+        return figures(Side.IN_SERVICE, ScoreBins.edge(cut))[0] >= purity;
+    }
+
+    Duty duty(DutyTerms.CutRule rule) {
+        DutyTerms terms = duty.terms();
+        return duty.with(new DutyTerms(
+                terms.mixDeviation(), terms.costs(), terms.required(), rule, terms.gain(), List.of(), List.of()));
+    }
+
     /** True purity and recovery of the fleet at a cut, nights and showings without end. */
     private double[] figures(Side side, double cut) {
         Map<String, Double> shares = new TreeMap<>();

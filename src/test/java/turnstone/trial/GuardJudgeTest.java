@@ -154,7 +154,7 @@ class GuardJudgeTest {
                 List.of(plant.duty));
         assertThat(verdict.decision()).as(verdict.text()).isEqualTo(Decision.RELEASE);
         assertThat(verdict.duties().get(0).requirements().get(0).name())
-                .startsWith("gain over in service: decision recovery at purity 9");
+                .startsWith("gain in decision recovery at purity 9");
         assertThat(verdict.duties().get(0).figures()).hasSize(2);
     }
 }

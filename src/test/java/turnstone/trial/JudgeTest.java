@@ -97,7 +97,7 @@ class JudgeTest {
         Verdict verdict = verdict(result, duty(Fixture.recovery(0.80, Requirement.Bound.POINT)));
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         assertThat(verdict.mainReason())
-                .startsWith("PET out: gain over in service: decision recovery, lower bound could not be judged: "
+                .startsWith("PET out: gain in decision recovery, lower bound could not be judged: "
                         + "not shown: needs about 4 more nights; found 1 day, 6 sorters and 24 showings")
                 .contains("required 5 days, 6 sorters and 120 showings; so far +");
         assertThat(verdict.duties().get(0).requirements().get(1).outcome())
@@ -123,7 +123,7 @@ class JudgeTest {
         Verdict verdict = fiveNights(2, 4, Fixture.recovery(0.80, Requirement.Bound.POINT));
         assertThat(verdict.decision()).as(verdict.text()).isEqualTo(Decision.RELEASE);
         RequirementResult gain = verdict.duties().get(0).requirements().get(1);
-        assertThat(gain.name()).isEqualTo("gain over in service: decision recovery, lower bound");
+        assertThat(gain.name()).isEqualTo("gain in decision recovery, lower bound");
         assertThat(gain.required()).isZero();
         assertThat(gain.bound()).isEqualTo("one-sided 95 % lower bound");
         assertThat(gain.why()).contains("5 nights of 6 sorters show a true gain of +1.00 points ");
@@ -143,9 +143,30 @@ class JudgeTest {
         Verdict verdict = fiveNights(5, 2);
         assertThat(verdict.decision()).isEqualTo(Decision.HOLD);
         assertThat(verdict.mainReason())
-                .startsWith("PET out: gain over in service: decision recovery, lower bound is -3.")
-                .contains(" points, required above +0.00 points; no gain was found; found -3.");
+                .startsWith("PET out: gain in decision recovery, lower bound is -3.")
+                .contains(" points, required above 0.00 points; no gain was found; found -3.");
         assertThat(verdict.text().lines()).allMatch(line -> line.length() <= 80);
+    }
+
+    @Test
+    void sortersWithoutShowingsAreNamed() {
+        Fixture alone = new Fixture()
+                .showing("avocet", "PET", 90, 10, 0, 0)
+                .showing("avocet", "PET", 91, 9, 0, 0)
+                .showing("curlew", "PP", 0, 99, 0, 0)
+                .showing("curlew", "PP", 1, 99, 0, 0);
+        Verdict verdict = verdict(
+                result(Optional.of(IN_SERVICE), alone)
+                        .tally(TrialForm.THIS_FLEET, Side.IN_SERVICE, alone.tally)
+                        .build(),
+                duty());
+        assertThat(verdict.duties().get(0).notes())
+                .containsExactly("half of the duty's sorters or more: no showing on dunlin, godwit, knot, plover;"
+                        + " nothing here speaks for what was not shown");
+        assertThat(verdict.mainReason())
+                .contains(
+                        "needs 4 more sorters; found 1 day, 2 sorters and 2 showings of the material with the fewest");
+        assertThat(verdict.json().path("duties").path(0).path("notes")).hasSize(1);
     }
 
     @Test

@@ -1,7 +1,9 @@
 package turnstone.trial;
 
+import java.time.LocalDate;
 import java.util.EnumMap;
 import java.util.Map;
+import turnstone.plant.DutyTerms;
 import turnstone.plant.Requirement;
 
 /** Counts, over independently drawn plants, how often intervals hold the truth and how often candidates are released. */
@@ -105,5 +107,24 @@ final class TrialProof {
             lost += 100 * (ladder.best - ladder.truth) / plants;
         }
         return new Ladders(plants, plain, nested, Math.sqrt((squares - nested * nested) / plants), lost);
+    }
+
+    /** Of plants whose cut was set on some nights, those where it was, and where the fleet's true purity is then what is required. */
+    record Cuts(int plants, int set, int held) {}
+
+    static Cuts cuts(long seed, int plants, DutyTerms.CutRule rule) {
+        int set = 0;
+        int held = 0;
+        for (int p = 0; p < plants; p++) {
+            DrawnPlant plant = new DrawnPlant(seed + p, SORTERS);
+            DrawnPlant.Nights nights = plant.show(CutChoice.LEAST_DAYS, SHOWINGS, RECORDS);
+            CutChoice choice =
+                    CutChoice.of(plant.duty(rule), nights.inService, nights.showings, LocalDate.of(2026, 4, 1));
+            if (choice.cut().isPresent()) {
+                set++;
+                held += plant.holdsPurity(choice.cut().getAsInt()) ? 1 : 0;
+            }
+        }
+        return new Cuts(plants, set, held);
     }
 }

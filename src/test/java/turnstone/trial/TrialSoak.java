@@ -5,6 +5,7 @@ import java.nio.file.Files;
 import java.nio.file.Path;
 import java.util.Locale;
 import java.util.Map;
+import turnstone.plant.DutyTerms;
 import turnstone.plant.Requirement;
 
 /** The long form of the proof: {@code scripts/soak trial}. Arguments: file to write, plants, ladders, trials, seed. */
@@ -23,6 +24,7 @@ final class TrialSoak {
         soak.coverage(TrialProof.coverage(seed, Integer.parseInt(arguments[1])));
         soak.releases(seed, Integer.parseInt(arguments[3]));
         soak.ladders(TrialProof.ladders(seed, Integer.parseInt(arguments[2])));
+        soak.cuts(seed, Integer.parseInt(arguments[1]));
         Files.writeString(Path.of(arguments[0]), soak.page.toString());
         System.out.println(soak.page);
     }
@@ -115,6 +117,25 @@ final class TrialSoak {
         line(
                 "| %d | %+.2f points | %+.2f points | %.2f | within 0.2 | %.2f points |",
                 l.plants(), l.plainMiss(), l.nestedMiss(), l.nestedError(), l.lost());
+    }
+
+    private void cuts(long seed, int plants) {
+        line("");
+        line("## The purity that a frozen cut keeps");
+        line(
+                "Cuts set on 3 nights of 6 sorters for nights to come; the fleet's true purity there against the required one.");
+        line("");
+        line("| cut | plants | set | true purity is what is required |");
+        line("|---|---|---|---|");
+        for (DutyTerms.CutRule rule : DutyTerms.CutRule.values()) {
+            TrialProof.Cuts cuts = TrialProof.cuts(seed, plants, rule);
+            line(
+                    "| %s | %d | %d | %.1f %% |",
+                    rule == DutyTerms.CutRule.POINT ? "point" : "lower end of the 90 % interval",
+                    cuts.plants(),
+                    cuts.set(),
+                    100.0 * cuts.held() / cuts.set());
+        }
     }
 
     private void line(String form, Object... values) {
