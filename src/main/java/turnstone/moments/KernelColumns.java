@@ -42,8 +42,8 @@ final class KernelColumns {
         return channels + fine.length;
     }
 
-    /** Copies a record of counts into a row of the kernel, after checking it. */
-    void split(double[] counts, int from, double[] rows, int to) {
+    /** Refuses a record of which a count is not an integer or beyond its channel's limit. */
+    void check(double[] counts, int from) {
         for (int c = 0; c < channels; c++) {
             double count = counts[from + c];
             // Written so that a count that is not a number fails.
@@ -51,8 +51,12 @@ final class KernelColumns {
                 throw new IllegalArgumentException("channel " + c + " is " + count + ", not an integer of at most "
                         + (long) limits[c] + " in size");
             }
-            rows[to + c] = count;
         }
+    }
+
+    /** Copies a record of counts into a row of the kernel. */
+    void split(double[] counts, int from, double[] rows, int to) {
+        System.arraycopy(counts, from, rows, to, channels);
         for (int f = 0; f < fine.length; f++) {
             long count = (long) counts[from + fine[f]];
             rows[to + fine[f]] = Bounds.low(count);

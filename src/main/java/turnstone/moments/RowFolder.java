@@ -54,6 +54,17 @@ public final class RowFolder {
      * @throws IllegalArgumentException if a count is not an integer or is beyond its channel's limit; nothing of the record is added then
      */
     public void add(double[] counts, int from) {
+        columns.check(counts, from);
+        addCounted(counts, from);
+    }
+
+    /**
+     * Adds one record of counts that a count scale has made for these channels: integers within their channels' limits, which is not looked
+     * at again. Anything else makes sums of no use.
+     *
+     * @param counts those of the record begin at {@code from}
+     */
+    public void addCounted(double[] counts, int from) {
         int to = buffered * width;
         if (to == rows.length) {
             int grown = Math.min(blockRows, Math.max(FIRST_ROWS, 2 * buffered));

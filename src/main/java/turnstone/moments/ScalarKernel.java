@@ -1,5 +1,7 @@
 package turnstone.moments;
 
+import java.util.concurrent.atomic.AtomicReference;
+
 /**
  * The block kernel in plain Java: packed, with tiles of 4 by 4 sums held in locals while the records go by.
  *
@@ -13,6 +15,9 @@ final class ScalarKernel implements BlockKernel {
 
     private static final int TILE = 4;
 
+    /** The scratch space, when no fold has it. A thread that finds none makes its own. */
+    private final AtomicReference<double[]> scratch = new AtomicReference<>(new double[0]);
+
     @Override
     public String name() {
         return "scalar";
@@ -22,7 +27,11 @@ final class ScalarKernel implements BlockKernel {
     public void fold(double[] rows, int rowCount, int channels, double[] triangle) {
         KernelShapes.check(rows, rowCount, channels, triangle);
         int groups = (channels + TILE - 1) / TILE;
-        double[] packed = new double[groups * TILE * Math.min(rowCount, PACKED_RECORDS)];
+        int needed = groups * TILE * Math.min(rowCount, PACKED_RECORDS);
+        double[] packed = scratch.getAndSet(null);
+        if (packed == null || packed.length < needed) {
+            packed = new double[needed];
+        }
         double[] tile = new double[TILE * TILE];
         for (int first = 0; first < rowCount; first += PACKED_RECORDS) {
             int records = Math.min(PACKED_RECORDS, rowCount - first);
@@ -34,6 +43,7 @@ final class ScalarKernel implements BlockKernel {
                 }
             }
         }
+        scratch.set(packed);
     }
 
     private static void pack(double[] rows, int first, int records, int channels, double[] packed) {

@@ -32,12 +32,12 @@ final class KeyFold {
             }
             folder = shape.folder();
             for (int r = 0; r < rowCount; r++) {
-                folder.add(rows, r * shape.channels());
+                folder.addCounted(rows, r * shape.channels());
             }
             rows = new double[0];
             rowCount = 0;
         }
-        folder.add(counts, 0);
+        folder.addCounted(counts, 0);
     }
 
     private void keep(double[] counts) {

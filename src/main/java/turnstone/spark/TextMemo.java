@@ -8,25 +8,27 @@ import org.apache.spark.unsafe.types.UTF8String;
 final class TextMemo {
     private static final int MOST_REMEMBERED = 100_000;
 
-    private final Map<UTF8String, String> known = new HashMap<>();
-    private UTF8String last;
-    private String lastText;
+    /** A text in both forms; ours is made once. */
+    private record Text(UTF8String bytes, String text) {}
+
+    private final Map<UTF8String, Text> known = new HashMap<>();
+    private Text last;
 
     String of(UTF8String value) {
-        if (last != null && last.equals(value)) {
-            return lastText;
+        if (last == null || !last.bytes.equals(value)) {
+            Text found = known.get(value);
+            last = found == null ? remembered(value) : found;
         }
-        String text = known.get(value);
-        UTF8String own = value.copy();
-        if (text == null) {
-            if (known.size() >= MOST_REMEMBERED) {
-                known.clear();
-            }
-            text = value.toString();
-            known.put(own, text);
+        return last.text;
+    }
+
+    private Text remembered(UTF8String value) {
+        if (known.size() >= MOST_REMEMBERED) {
+            known.clear();
         }
-        last = own;
-        lastText = text;
+        // The engine writes over its strings: what is kept is a copy.
+        Text text = new Text(value.copy(), value.toString());
+        known.put(text.bytes, text);
         return text;
     }
 }
