@@ -78,6 +78,19 @@ public final class ScoreHistogram implements Serializable {
         put(new Key(showing, truth), NO_SIGNAL, records);
     }
 
+    /** Counts what a task has gathered of one showing: {@link ScoreBins#COUNT} bins, and what is beside them. */
+    public void add(String showing, String truth, long[] bins, long unfamiliar, long noSignal) {
+        if (bins.length != ScoreBins.COUNT) {
+            throw new IllegalArgumentException(bins.length + " bins, not " + ScoreBins.COUNT);
+        }
+        Key key = new Key(showing, truth);
+        for (int bin = 0; bin < bins.length; bin++) {
+            put(key, bin, bins[bin]);
+        }
+        put(key, UNFAMILIAR, unfamiliar);
+        put(key, NO_SIGNAL, noSignal);
+    }
+
     private void put(Key key, int place, long records) {
         if (records < 0) {
             throw new IllegalArgumentException("a histogram cannot take " + records + " records");

@@ -80,6 +80,16 @@ class FrontierTest {
     }
 
     @Test
+    void theFileHasTheCutsWhereFiguresChange() {
+        small();
+        Frontier frontier = Frontier.of(Fixture.duty(Duty.Stream.EJECTED, MIX), histogram, showings);
+        assertThat(frontier.json().toString())
+                .startsWith(
+                        "{\"frontier\":[[0,0.4736842105263158,0.9],[289,0.888888888888889,0.8],[290,0.8333333333333333,0.1")
+                .endsWith("],[291,null,0.0]]}");
+    }
+
+    @Test
     void wherePassedIsTheProductTheCutWorksTheOtherWay() {
         small();
         Frontier frontier = Frontier.of(Fixture.duty(Duty.Stream.PASSED, MIX), histogram, showings);

@@ -3,6 +3,7 @@ package turnstone.trial;
 import static org.assertj.core.api.Assertions.assertThat;
 import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
+import java.util.Arrays;
 import java.util.List;
 import java.util.Map;
 import java.util.Random;
@@ -66,6 +67,15 @@ class ScoreHistogramTest {
             }
         }
         right.merge(left);
+        ScoreHistogram gathered = ScoreHistogram.empty();
+        whole.rows()
+                .forEach((key, row) -> gathered.add(
+                        key.showing(),
+                        key.truth(),
+                        Arrays.copyOf(row, ScoreBins.COUNT),
+                        row[ScoreBins.COUNT],
+                        row[ScoreBins.COUNT + 1]));
+        assertThat(gathered.fingerprint()).isEqualTo(whole.fingerprint());
         assertThat(right.fingerprint()).isEqualTo(whole.fingerprint());
         assertThat(whole.records()).isEqualTo(2000);
         assertThat(ScoreHistogram.read(whole.json(), "scores.json").fingerprint())
