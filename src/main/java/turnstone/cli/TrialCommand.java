@@ -76,10 +76,10 @@ final class TrialCommand implements Callable<Integer> {
                         .remedy("post it first"));
         Optional<Model> inService = RefitStep.inService(file, shelf);
         try (Session session = Engine.open("trial", console)) {
-            Day found =
-                    new Night(file, session, console.talk(), Clock.systemUTC()).open(day, Set.copyOf(posted.without()));
-            TrialStep.Tried tried =
-                    TrialStep.run(file, ledger, found, new TrialStep.Contest(recipe, model, inService), console.talk());
+            Night night = new Night(file, session, console.talk(), Clock.systemUTC());
+            Day found = night.open(day, Set.copyOf(posted.without()));
+            TrialStep.Contest contest = new TrialStep.Contest(recipe, model, inService);
+            TrialStep.Tried tried = TrialStep.run(file, ledger, found, contest, night::openPosted, console.talk());
             RunFolder run = RunFolder.next(Places.runs(file), day);
             TrialFiles.write(run, tried.result());
             String page = VerdictRemarks.page(file, tried.verdict());

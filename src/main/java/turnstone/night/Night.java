@@ -96,8 +96,8 @@ public final class Night {
         Model candidate = refit(ledger, shelf, date, recipe, inService);
         record.lap("refit");
 
-        TrialStep.Tried tried =
-                TrialStep.run(plant, ledger, day, new TrialStep.Contest(recipe, candidate, inService), progress);
+        TrialStep.Contest contest = new TrialStep.Contest(recipe, candidate, inService);
+        TrialStep.Tried tried = TrialStep.run(plant, ledger, day, contest, this::openPosted, progress);
         record.lap("trial");
         Optional<ProjectResult> projected = project(day, candidate, run);
         record.lap("project");
@@ -121,6 +121,11 @@ public final class Night {
         progress.done("found " + Words.number(day.source().rows()) + " records of " + date + " in "
                 + day.source().files().size() + " files");
         return day;
+    }
+
+    /** Finds the files of a posted day again, without what it was posted without. */
+    public Day openPosted(DayEntry posted) {
+        return Day.open(session, plant, posted.day(), new TreeSet<>(posted.without()));
     }
 
     /** What a posted day was posted without stays out of every later run of that day. */

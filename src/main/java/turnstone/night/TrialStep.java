@@ -3,7 +3,10 @@ package turnstone.night;
 import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.Collection;
+import java.util.Comparator;
+import java.util.EnumMap;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
 import turnstone.decide.Model;
 import turnstone.ledger.DayCounts;
@@ -25,10 +28,11 @@ import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
 import turnstone.trial.TrialResult;
 import turnstone.trial.TrialShowing;
+import turnstone.trial.TrialTally;
 import turnstone.trial.Verdict;
 
 /**
- * Tries a recipe on a day's records: made from the days before that day, against the recipe and days of what is in service, both re-made
+ * Tries a recipe forward in time, on the newest days that neither side has seen: for each day made from the days before it, against the recipe and days of what is in service, both re-made
  * without the tray group of the record being judged, and in a second form without its instrument as well.
  */
 public final class TrialStep {
@@ -54,48 +58,107 @@ public final class TrialStep {
      */
     public record Contest(Recipe recipe, Model candidate, Optional<Model> inService) {}
 
-    /** Runs the trial; nothing is written. */
-    public static Tried run(Plant plant, Ledger ledger, Day day, Contest contest, Progress progress) {
-        DayEntry posted = ledger.day(day.day()).orElseThrow();
-        Collection<ShowingSums> showings = ledger.showings(posted).values();
+    /** Finds the records of a day that is posted already, with what was left out of it. */
+    @FunctionalInterface
+    public interface Opener {
+        /** The day of this entry. */
+        Day open(DayEntry posted);
+    }
+
+    /**
+     * Runs the trial forward in time: each of the newest days that neither side has seen is judged by the candidate's recipe on the days
+     * before it. Nothing is written.
+     *
+     * @param day the newest of them
+     * @param earlier finds the days before it
+     */
+    public static Tried run(Plant plant, Ledger ledger, Day day, Contest contest, Opener earlier, Progress progress) {
         TrialResult.Builder result = TrialResult.of(
                         contest.candidate().fingerprint(), contest.inService().map(Model::fingerprint))
-                .showings(trialShowings(day.day(), showings))
-                .facts(facts(posted, contest.candidate()));
+                .facts(facts(ledger.day(day.day()).orElseThrow(), contest.candidate()));
         List<DayEntry> before =
                 Window.before(ledger, day.day(), contest.recipe().window_days());
         Optional<String> obstacle = obstacle(day.day(), before, contest.inService());
         if (obstacle.isPresent()) {
+            DayEntry posted = ledger.day(day.day()).orElseThrow();
+            result.showings(trialShowings(day.day(), ledger.showings(posted).values()));
             plant.materialNames().forEach(material -> result.notTried(material, obstacle.get()));
             return judged(plant, result.build(), 0);
         }
-        progress.phase("re-make both sides without each tray group and machine");
-        TrialPairs pairs = pairs(plant, ledger, before, contest, showings);
-        pairs.seenWhole().forEach(result::oneGroupOnly);
-        pairs.oneMachineOnly().forEach(result::oneMachineOnly);
-        progress.done("re-made " + Words.number(pairs.models().size()) + " pairs of models");
-        progress.phase("trial of " + day.day(), day.source().rows());
-        TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), QUARANTINE_KEPT);
-        for (TrialForm form : TrialForm.values()) {
-            result.tally(form, Side.CANDIDATE, tallies.tally(form, Side.CANDIDATE));
-            if (contest.inService().isPresent()) {
-                result.tally(form, Side.IN_SERVICE, tallies.tally(form, Side.IN_SERVICE));
-            }
-        }
-        progress.done("tried on "
-                + Words.number(tallies.counts().accepted() + tallies.counts().noSignal()) + " records of " + day.day()
-                + " that neither side has seen");
-        return judged(plant, result.build(), pairs.models().size());
-    }
-
-    private static TrialPairs pairs(
-            Plant plant, Ledger ledger, List<DayEntry> before, Contest contest, Collection<ShowingSums> showings) {
-        ModelMaker maker = new ModelMaker(plant.materialNames(), plant.head(), plant.countScale());
-        TrialPairs.Maker candidate = new TrialPairs.Maker(contest.recipe(), WindowSums.read(ledger, before));
         Optional<TrialPairs.Maker> inService = contest.inService()
                 .map(model -> new TrialPairs.Maker(
                         Recipe.fromJson(model.recipe().orElseThrow(), "model " + model.fingerprint()),
                         WindowSums.read(ledger, Window.of(ledger, model))));
+        Map<TrialForm, Map<Side, TrialTally>> sums = new EnumMap<>(TrialForm.class);
+        int models = 0;
+        for (DayEntry posted : judgedDays(plant, ledger, day.day(), contest.inService())) {
+            Day found = posted.day().equals(day.day()) ? day : earlier.open(posted);
+            Collection<ShowingSums> showings = ledger.showings(posted).values();
+            result.showings(trialShowings(posted.day(), showings));
+            TrialPairs pairs = pairs(plant, ledger, posted.day(), contest.recipe(), inService, showings, progress);
+            pairs.seenWhole().forEach(result::oneGroupOnly);
+            pairs.oneMachineOnly().forEach(result::oneMachineOnly);
+            models += pairs.models().size();
+            add(sums, tallies(found, pairs, progress), contest.inService());
+        }
+        sums.forEach((form, sides) -> sides.forEach((side, tally) -> result.tally(form, side, tally)));
+        return judged(plant, result.build(), models);
+    }
+
+    /** The newest posted days up to this one that neither side has seen: as many as the plant's duties want; one where there is nothing to compare. */
+    private static List<DayEntry> judgedDays(Plant plant, Ledger ledger, LocalDate last, Optional<Model> inService) {
+        int wanted = inService.isEmpty()
+                ? 1
+                : plant.duties().stream()
+                        .mapToInt(duty -> duty.terms().gain().days())
+                        .max()
+                        .orElse(1);
+        Optional<LocalDate> seen = inService.flatMap(model -> model.madeFrom().days().stream()
+                .map(made -> LocalDate.parse(made.day()))
+                .max(Comparator.naturalOrder()));
+        List<DayEntry> posted = ledger.days();
+        List<DayEntry> unseen = posted.stream()
+                .skip(1)
+                .filter(entry -> !entry.day().isAfter(last))
+                .filter(entry -> seen.isEmpty() || entry.day().isAfter(seen.get()))
+                .toList();
+        return unseen.subList(Math.max(0, unseen.size() - wanted), unseen.size());
+    }
+
+    private static TrialTallies tallies(Day day, TrialPairs pairs, Progress progress) {
+        progress.phase("trial of " + day.day(), day.source().rows());
+        TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), QUARANTINE_KEPT);
+        progress.done("tried on "
+                + Words.number(tallies.counts().accepted() + tallies.counts().noSignal()) + " records of " + day.day()
+                + " that neither side has seen, by "
+                + Words.number(pairs.models().size()) + " pairs of models");
+        return tallies;
+    }
+
+    private static void add(
+            Map<TrialForm, Map<Side, TrialTally>> sums, TrialTallies tallies, Optional<Model> inService) {
+        for (TrialForm form : TrialForm.values()) {
+            Map<Side, TrialTally> sides = sums.computeIfAbsent(form, f -> new EnumMap<>(Side.class));
+            for (Side side : Side.values()) {
+                if (side == Side.CANDIDATE || inService.isPresent()) {
+                    sides.computeIfAbsent(side, s -> TrialTally.empty()).merge(tallies.tally(form, side));
+                }
+            }
+        }
+    }
+
+    private static TrialPairs pairs(
+            Plant plant,
+            Ledger ledger,
+            LocalDate day,
+            Recipe recipe,
+            Optional<TrialPairs.Maker> inService,
+            Collection<ShowingSums> showings,
+            Progress progress) {
+        progress.phase("re-make both sides without each tray group and machine, for " + day);
+        ModelMaker maker = new ModelMaker(plant.materialNames(), plant.head(), plant.countScale());
+        List<DayEntry> before = Window.before(ledger, day, recipe.window_days());
+        TrialPairs.Maker candidate = new TrialPairs.Maker(recipe, WindowSums.read(ledger, before));
         return TrialPairs.make(maker, candidate, inService, showings);
     }
 

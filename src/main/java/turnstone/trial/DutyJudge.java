@@ -8,7 +8,9 @@ import java.util.Map;
 import java.util.Optional;
 import java.util.OptionalDouble;
 import java.util.OptionalInt;
+import java.util.Set;
 import java.util.TreeSet;
+import java.util.stream.Collectors;
 import turnstone.plant.Duty;
 import turnstone.plant.Guard;
 import turnstone.plant.PpmLimit;
@@ -22,12 +24,19 @@ final class DutyJudge {
     private final Duty duty;
     private final Map<String, TrialShowing> showings = new HashMap<>();
     private final Map<String, TrialShowing> allShowings = new HashMap<>();
+    private final Set<String> tonight;
 
     DutyJudge(TrialResult trial, Duty duty) {
         this.trial = trial;
         this.duty = duty;
         trial.showings().forEach(showing -> showings.put(showing.showing(), showing));
         allShowings.putAll(showings);
+        LocalDate newest =
+                trial.days().isEmpty() ? null : trial.days().get(trial.days().size() - 1);
+        tonight = trial.showings().stream()
+                .filter(showing -> showing.day().equals(newest))
+                .map(TrialShowing::showing)
+                .collect(Collectors.toSet());
         trial.earlierShowings().forEach(showing -> allShowings.put(showing.showing(), showing));
     }
 
@@ -49,8 +58,13 @@ final class DutyJudge {
         return DutyVerdict.of(duty.name(), results, figures(), bounds, costs(), notes());
     }
 
-    /** What one side sent: at its cut where one was set on earlier days, else by the decision for the nearest material. */
+    /** What one side sent on the newest day of the trial: the gain alone takes all of them. */
     private Optional<Sendings> sendings(TrialForm form, Side side) {
+        return sendingsOfAllDays(form, side).map(sendings -> sendings.onlyShowings(tonight));
+    }
+
+    /** At its cut where one was set on earlier days, else by the decision for the nearest material. */
+    private Optional<Sendings> sendingsOfAllDays(TrialForm form, Side side) {
         OptionalInt cut = trial.cut(duty.name(), form, side);
         Optional<ScoreHistogram> scores = trial.scores(duty.name(), form, side);
         if (cut.isPresent() && scores.isPresent()) {

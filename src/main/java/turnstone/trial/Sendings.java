@@ -5,6 +5,7 @@ import java.util.LinkedHashMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
 import java.util.SortedSet;
 import java.util.TreeMap;
 import java.util.TreeSet;
@@ -100,6 +101,13 @@ final class Sendings {
     /** The same with every part changed. */
     Sendings map(UnaryOperator<Part> change) {
         return new Sendings(parts.stream().map(change).toList());
+    }
+
+    /** The same of these showings alone, by id. */
+    Sendings onlyShowings(Set<String> ids) {
+        return map(part -> part.with(part.showings().stream()
+                .filter(showing -> ids.contains(showing.showing()))
+                .toList()));
     }
 
     /** The same of one sorter alone. */

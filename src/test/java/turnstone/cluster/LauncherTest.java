@@ -104,7 +104,8 @@ class LauncherTest {
     void keepsWhatTheMachinePrintsOffTheTerminalAndInTheLog() throws IOException {
         // The command is refused for its option, so no engine starts: what is left is what the Java machine says of
         // itself.
-        Ended ended = launch(LAUNCHER, Map.of(), "post", "--no-such-option");
+        Ended ended =
+                launch(LAUNCHER, Map.of(), "post", "--plant", "none.yaml", "--day", "2026-03-01", "--no-such-option");
         assertThat(ended.exitCode()).as(ended.talk()).isEqualTo(2);
         assertThat(ended.talk()).contains("--no-such-option").doesNotContain("WARNING");
         try (Stream<Path> logs = Files.list(folder.resolve("log"))) {
