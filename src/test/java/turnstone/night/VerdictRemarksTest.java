@@ -49,7 +49,8 @@ class VerdictRemarksTest {
                 figure(TrialForm.MACHINE_NOT_SEEN, Requirement.Figure.DECISION_PURITY, 0.5),
                 figure(TrialForm.THIS_FLEET, Requirement.Figure.DECISION_PURITY, 0.9),
                 figure(TrialForm.THIS_FLEET, Requirement.Figure.DECISION_RECOVERY, 0.8));
-        DutyVerdict duty = new DutyVerdict(DUTY, Decision.HOLD, "because", List.of(), figures, List.of(), List.of());
+        DutyVerdict duty =
+                new DutyVerdict(DUTY, Decision.HOLD, "because", List.of(), figures, List.of(), List.of(), List.of());
         return new Verdict(
                 Decision.HOLD,
                 "because",
