@@ -28,6 +28,7 @@ import turnstone.spark.ProjectJob;
 import turnstone.spark.ProjectResult;
 import turnstone.spark.ProjectSettings;
 import turnstone.spark.Session;
+import turnstone.spark.SourceDays;
 import turnstone.spark.TableSpec;
 import turnstone.trial.Verdict;
 
@@ -123,9 +124,13 @@ public final class Night {
         return day;
     }
 
-    /** Finds the files of a posted day again, without what it was posted without. */
-    public Day openPosted(DayEntry posted) {
-        return Day.open(session, plant, posted.day(), new TreeSet<>(posted.without()));
+    /** Finds the files of a posted day again, less what it was posted without; empty, with a remark, where they are no longer there. */
+    public Optional<Day> openPosted(DayEntry posted) {
+        if (!SourceDays.of(session, plant).contains(posted.day())) {
+            progress.remark("the records of " + posted.day() + " are no longer in the source: that day is not judged");
+            return Optional.empty();
+        }
+        return Optional.of(Day.open(session, plant, posted.day(), new TreeSet<>(posted.without())));
     }
 
     /** What a posted day was posted without stays out of every later run of that day. */

@@ -9,6 +9,7 @@ import java.util.List;
 import java.util.Map;
 import java.util.Optional;
 import turnstone.decide.Model;
+import turnstone.fault.Fault;
 import turnstone.ledger.DayCounts;
 import turnstone.ledger.DayEntry;
 import turnstone.ledger.Ledger;
@@ -58,11 +59,11 @@ public final class TrialStep {
      */
     public record Contest(Recipe recipe, Model candidate, Optional<Model> inService) {}
 
-    /** Finds the records of a day that is posted already, with what was left out of it. */
+    /** Finds the records of a day that is posted already, less what was left out of it. */
     @FunctionalInterface
     public interface Opener {
-        /** The day of this entry. */
-        Day open(DayEntry posted);
+        /** The day of this entry; empty where its records are no longer in the source. */
+        Optional<Day> open(DayEntry posted);
     }
 
     /**
@@ -92,14 +93,19 @@ public final class TrialStep {
         Map<TrialForm, Map<Side, TrialTally>> sums = new EnumMap<>(TrialForm.class);
         int models = 0;
         for (DayEntry posted : judgedDays(plant, ledger, day.day(), contest.inService())) {
-            Day found = posted.day().equals(day.day()) ? day : earlier.open(posted);
+            Optional<Day> found = posted.day().equals(day.day()) ? Optional.of(day) : earlier.open(posted);
+            if (found.isEmpty()) {
+                continue;
+            }
             Collection<ShowingSums> showings = ledger.showings(posted).values();
             result.showings(trialShowings(posted.day(), showings));
             TrialPairs pairs = pairs(plant, ledger, posted.day(), contest.recipe(), inService, showings, progress);
             pairs.seenWhole().forEach(result::oneGroupOnly);
             pairs.oneMachineOnly().forEach(result::oneMachineOnly);
             models += pairs.models().size();
-            add(sums, tallies(found, pairs, progress), contest.inService());
+            TrialTallies tallies = tallies(found.get(), pairs, progress);
+            requirePosted(posted, tallies);
+            add(sums, tallies, contest.inService());
         }
         sums.forEach((form, sides) -> sides.forEach((side, tally) -> result.tally(form, side, tally)));
         return judged(plant, result.build(), models);
@@ -123,6 +129,20 @@ public final class TrialStep {
                 .filter(entry -> seen.isEmpty() || entry.day().isAfter(seen.get()))
                 .toList();
         return unseen.subList(Math.max(0, unseen.size() - wanted), unseen.size());
+    }
+
+    /** A day is judged on the records that were posted, not on what its files hold by now. */
+    private static void requirePosted(DayEntry posted, TrialTallies tallies) {
+        long accepted = tallies.counts().accepted();
+        long noSignal = tallies.counts().noSignal();
+        if (accepted != posted.counts().accepted()
+                || noSignal != posted.counts().noSignal()) {
+            throw Fault.input("the records of " + posted.day() + " are no longer those that were posted")
+                    .found(accepted + " accepted, " + noSignal + " no signal")
+                    .expected(posted.counts().accepted() + " accepted, "
+                            + posted.counts().noSignal() + " no signal")
+                    .remedy("put the files back as they were, or post the day again with --replace");
+        }
     }
 
     private static TrialTallies tallies(Day day, TrialPairs pairs, Progress progress) {

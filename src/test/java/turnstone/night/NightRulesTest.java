@@ -1,19 +1,23 @@
 package turnstone.night;
 
 import static org.assertj.core.api.Assertions.assertThat;
+import static org.assertj.core.api.Assertions.assertThatThrownBy;
 
 import java.io.IOException;
 import java.nio.charset.StandardCharsets;
 import java.nio.file.Files;
+import java.nio.file.Path;
 import java.time.LocalDate;
 import java.util.List;
 import java.util.Optional;
 import java.util.Set;
 import java.util.TreeSet;
+import java.util.stream.Stream;
 import org.apache.spark.sql.functions;
 import org.junit.jupiter.api.Test;
 import org.junit.jupiter.api.extension.ExtendWith;
 import turnstone.decide.Model;
+import turnstone.fault.Fault;
 import turnstone.json.Json;
 import turnstone.ledger.Ledger;
 import turnstone.ledger.PostOutcome;
@@ -22,6 +26,7 @@ import turnstone.refit.HeldOut;
 import turnstone.sample.SampleShowing;
 import turnstone.shelf.Shelf;
 import turnstone.spark.SharedSession;
+import turnstone.spark.SourceDays;
 import turnstone.trial.Decision;
 import turnstone.trial.DutyVerdict;
 import turnstone.trial.RequirementResult;
@@ -65,23 +70,59 @@ class NightRulesTest {
         assertThat(candidate(first, "this fleet").records()).isPositive();
         assertSame(again, first);
 
-        var spark = small.session().spark();
-        spark.read()
-                .parquet(
-                        small.home().resolve("records").resolve(last.toString()).toString())
-                .repartition(7, functions.col("piece"), functions.col("belt_column"))
-                .sortWithinPartitions(
-                        functions.col("belt_column"), functions.col("time_ms").desc())
-                .write()
-                .parquet(small.home()
-                        .resolve("shuffled")
-                        .resolve(last.toString())
-                        .toString());
+        for (LocalDate day : SourceDays.of(small.session(), plant)) {
+            shuffle(small, day);
+        }
         Plant shuffled = small.evening(text -> SmallPlant.replaced(text, "records/{day}", "shuffled/{day}"));
         Night.Result other = small.nightOf(shuffled).run(last);
         assertThat(other.entry().inputs())
                 .hasSizeGreaterThan(first.entry().inputs().size());
         assertSame(other, first);
+    }
+
+    private static void shuffle(SmallPlant small, LocalDate day) {
+        small.session()
+                .spark()
+                .read()
+                .parquet(small.home().resolve("records").resolve(day.toString()).toString())
+                .repartition(7, functions.col("piece"), functions.col("belt_column"))
+                .sortWithinPartitions(
+                        functions.col("belt_column"), functions.col("time_ms").desc())
+                .write()
+                .parquet(
+                        small.home().resolve("shuffled").resolve(day.toString()).toString());
+    }
+
+    @Test
+    void anEarlierNightWhoseRecordsAreGoneIsNotJudgedAndOneWhoseRecordsChangedIsRefused(@Coarse SmallPlant small)
+            throws IOException {
+        LocalDate last = small.lastNight();
+        LocalDate before = last.minusDays(1);
+        copy(small, last, "gone", 9);
+        Plant gone = small.evening(text -> SmallPlant.replaced(text, "records/{day}", "gone/{day}"));
+        assertThat(small.nightOf(gone).run(last).verdict().days()).containsExactly(last);
+
+        copy(small, last, "changed", 9);
+        copy(small, before, "changed", 1);
+        Plant changed = small.evening(text -> SmallPlant.replaced(text, "records/{day}", "changed/{day}"));
+        assertThatThrownBy(() -> small.nightOf(changed).run(last))
+                .isInstanceOf(Fault.class)
+                .hasMessageContaining("the records of " + before + " are no longer those that were posted");
+    }
+
+    /** The first files of a day, into a place of their own. */
+    private static void copy(SmallPlant small, LocalDate day, String place, int most) throws IOException {
+        Path target = Files.createDirectories(small.home().resolve(place).resolve(day.toString()));
+        try (Stream<Path> files = Files.list(small.home().resolve("records").resolve(day.toString()))) {
+            List<Path> first = files.filter(file -> file.toString().endsWith(".parquet"))
+                    .sorted()
+                    .limit(most)
+                    .toList();
+            assertThat(first).isNotEmpty();
+            for (Path file : first) {
+                Files.copy(file, target.resolve(file.getFileName()));
+            }
+        }
     }
 
     @Test
