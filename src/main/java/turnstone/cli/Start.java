@@ -38,7 +38,7 @@ public final class Start {
                     .invoke(null, (Object) Arrays.copyOfRange(arguments, 1, arguments.length));
         } catch (InvocationTargetException wrapped) {
             Throwable cause = wrapped.getCause();
-            cause.printStackTrace(log);
+            Traces.print(cause, log);
             String message =
                     String.valueOf(cause.getMessage()).lines().findFirst().orElse("");
             System.err.println("turnstone: the run could not be started: " + message);

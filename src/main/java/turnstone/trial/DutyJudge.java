@@ -58,7 +58,7 @@ final class DutyJudge {
         return DutyVerdict.of(duty.name(), results, figures(), bounds, costs(), notes());
     }
 
-    /** What one side sent on the newest day of the trial: the gain alone takes all of them. */
+    /** What one side sent on the newest day of the trial; the gain and the guards take all its days. */
     private Optional<Sendings> sendings(TrialForm form, Side side) {
         return sendingsOfAllDays(form, side).map(sendings -> sendings.onlyShowings(tonight));
     }
@@ -155,10 +155,10 @@ final class DutyJudge {
 
     private RequirementResult guard(Guard guard) {
         Sendings nothing = Sendings.of(duty, TrialTally.empty(), showings);
-        Sendings ours = sendings(TrialForm.THIS_FLEET, Side.CANDIDATE).orElse(nothing);
+        Sendings ours = sendingsOfAllDays(TrialForm.THIS_FLEET, Side.CANDIDATE).orElse(nothing);
         Sendings theirs = trial.inService().isEmpty()
                 ? null
-                : sendings(TrialForm.THIS_FLEET, Side.IN_SERVICE).orElse(nothing);
+                : sendingsOfAllDays(TrialForm.THIS_FLEET, Side.IN_SERVICE).orElse(nothing);
         return new GuardJudge(trial.facts(), ours, theirs).judge(guard);
     }
 
