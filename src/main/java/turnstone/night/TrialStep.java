@@ -8,6 +8,8 @@ import java.util.EnumMap;
 import java.util.List;
 import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
+import java.util.TreeMap;
 import turnstone.decide.Model;
 import turnstone.fault.Fault;
 import turnstone.ledger.DayCounts;
@@ -23,8 +25,10 @@ import turnstone.refit.Window;
 import turnstone.refit.WindowSums;
 import turnstone.spark.TrialJob;
 import turnstone.spark.TrialTallies;
+import turnstone.trial.EjectScore;
 import turnstone.trial.Judge;
 import turnstone.trial.NightFacts;
+import turnstone.trial.ScoreHistogram;
 import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
 import turnstone.trial.TrialResult;
@@ -91,6 +95,8 @@ public final class TrialStep {
                         Recipe.fromJson(model.recipe().orElseThrow(), "model " + model.fingerprint()),
                         WindowSums.read(ledger, Window.of(ledger, model))));
         Map<TrialForm, Map<Side, TrialTally>> sums = new EnumMap<>(TrialForm.class);
+        Map<String, Map<Side, ScoreHistogram>> scores = new TreeMap<>();
+        Map<String, Set<String>> ejected = ejected(plant);
         int models = 0;
         for (DayEntry posted : judgedDays(plant, ledger, day.day(), contest.inService())) {
             Optional<Day> found = posted.day().equals(day.day()) ? Optional.of(day) : earlier.open(posted);
@@ -103,11 +109,17 @@ public final class TrialStep {
             pairs.seenWhole().forEach(result::oneGroupOnly);
             pairs.oneMachineOnly().forEach(result::oneMachineOnly);
             models += pairs.models().size();
-            TrialTallies tallies = tallies(found.get(), pairs, progress);
+            TrialTallies tallies = tallies(found.get(), pairs, ejected, progress);
             requirePosted(posted, tallies);
             add(sums, tallies, contest.inService());
+            addScores(scores, tallies, ejected.keySet());
         }
         sums.forEach((form, sides) -> sides.forEach((side, tally) -> result.tally(form, side, tally)));
+        scores.forEach((duty, sides) -> sides.forEach((side, histogram) -> {
+            if (histogram.records() > 0) {
+                result.scores(duty, TrialForm.THIS_FLEET, side, histogram);
+            }
+        }));
         return judged(plant, result.build(), models);
     }
 
@@ -131,6 +143,25 @@ public final class TrialStep {
         return unseen.subList(Math.max(0, unseen.size() - wanted), unseen.size());
     }
 
+    /** What is ejected by each duty that fixes a figure: their gain is taken from scores. */
+    private static Map<String, Set<String>> ejected(Plant plant) {
+        Map<String, Set<String>> ejected = new TreeMap<>();
+        plant.duties().stream()
+                .filter(duty -> duty.terms().required().isPresent())
+                .forEach(duty -> ejected.put(duty.name(), EjectScore.ejected(duty, plant.materialNames())));
+        return ejected;
+    }
+
+    private static void addScores(
+            Map<String, Map<Side, ScoreHistogram>> scores, TrialTallies tallies, Set<String> duties) {
+        for (String duty : duties) {
+            Map<Side, ScoreHistogram> sides = scores.computeIfAbsent(duty, name -> new EnumMap<>(Side.class));
+            for (Side side : Side.values()) {
+                sides.computeIfAbsent(side, s -> ScoreHistogram.empty()).merge(tallies.scores(duty, side));
+            }
+        }
+    }
+
     /** A day is judged on the records that were posted, not on what its files hold by now. */
     private static void requirePosted(DayEntry posted, TrialTallies tallies) {
         long accepted = tallies.counts().accepted();
@@ -145,9 +176,10 @@ public final class TrialStep {
         }
     }
 
-    private static TrialTallies tallies(Day day, TrialPairs pairs, Progress progress) {
+    private static TrialTallies tallies(
+            Day day, TrialPairs pairs, Map<String, Set<String>> ejected, Progress progress) {
         progress.phase("trial of " + day.day(), day.source().rows());
-        TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), QUARANTINE_KEPT);
+        TrialTallies tallies = TrialJob.run(day.source(), day.intake(), pairs.models(), ejected, QUARANTINE_KEPT);
         progress.done("tried on "
                 + Words.number(tallies.counts().accepted() + tallies.counts().noSignal()) + " records of " + day.day()
                 + " that neither side has seen, by "

@@ -1,9 +1,15 @@
 package turnstone.spark;
 
+import java.util.Arrays;
+import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
+import java.util.TreeMap;
 import turnstone.decide.Judgement;
 import turnstone.decide.Projector;
+import turnstone.trial.EjectScore;
 import turnstone.trial.Recognition;
+import turnstone.trial.ScoreBins;
 import turnstone.trial.Side;
 import turnstone.trial.TallyCell;
 import turnstone.trial.TrialForm;
@@ -26,29 +32,59 @@ final class TrialSlot {
         final double[] position;
         final long[] familiar;
         final long[] unfamiliar;
+        final double[] scores;
+        final TreeMap<String, Binned> binned = new TreeMap<>();
 
-        Judged(Projector projector) {
+        Judged(Projector projector, Map<String, Set<String>> ejected) {
             this.projector = projector;
             this.position = new double[projector.rank()];
             this.familiar = new long[projector.materials().size()];
             this.unfamiliar = new long[projector.materials().size()];
+            this.scores = new double[projector.materials().size()];
+            ejected.forEach((duty, names) -> EjectScore.of(names, projector.materials())
+                    .ifPresent(score -> binned.put(duty, new Binned(score))));
         }
 
         void judge(double[] counts, Judgement judgement) {
             projector.judge(counts, 0, position, judgement);
             long[] cells = judgement.unfamiliar() ? unfamiliar : familiar;
             cells[judgement.material()]++;
+            if (!binned.isEmpty() && !judgement.unfamiliar()) {
+                projector.scores(position, scores);
+                for (Binned duty : binned.values()) {
+                    duty.bins[duty.score.bin(judgement.material(), scores)]++;
+                }
+            }
         }
     }
 
-    TrialSlot(TrialForm form, Slot slot, TrialModels models) {
+    /** Familiar records by the bin of their score for one duty. */
+    private static final class Binned {
+        final EjectScore score;
+        final long[] bins = new long[ScoreBins.COUNT];
+
+        Binned(EjectScore score) {
+            this.score = score;
+        }
+    }
+
+    /**
+     * The records of one showing.
+     *
+     * @param ejected by duty, the materials that it ejects; scores are binned for these duties, for this fleet only
+     */
+    TrialSlot(TrialForm form, Slot slot, TrialModels models, Map<String, Set<String>> ejected) {
+        Map<String, Set<String>> wanted = form == TrialForm.THIS_FLEET ? ejected : Map.of();
         this.form = form;
         this.slot = slot;
         this.pair =
                 models.find(form, slot.trayGroup, slot.instrument).filter(found -> found.tries(slot.keys.material()));
-        this.candidate = pair.map(TrialModels.Pair::candidate).map(Judged::new).orElse(null);
-        this.inService =
-                pair.flatMap(TrialModels.Pair::inService).map(Judged::new).orElse(null);
+        this.candidate = pair.map(TrialModels.Pair::candidate)
+                .map(projector -> new Judged(projector, wanted))
+                .orElse(null);
+        this.inService = pair.flatMap(TrialModels.Pair::inService)
+                .map(projector -> new Judged(projector, wanted))
+                .orElse(null);
     }
 
     void judge(double[] counts, Judgement judgement) {
@@ -71,13 +107,14 @@ final class TrialSlot {
             tallies.addNotTried(form, records);
             return;
         }
-        add(tallies.tally(form, Side.CANDIDATE), candidate);
+        add(tallies, Side.CANDIDATE, candidate);
         if (inService != null) {
-            add(tallies.tally(form, Side.IN_SERVICE), inService);
+            add(tallies, Side.IN_SERVICE, inService);
         }
     }
 
-    private void add(TrialTally tally, Judged judged) {
+    private void add(TrialTallies tallies, Side side, Judged judged) {
+        TrialTally tally = tallies.tally(form, side);
         String showing = slot.keys.showing();
         String truth = slot.keys.material();
         for (int m = 0; m < judged.familiar.length; m++) {
@@ -86,5 +123,8 @@ final class TrialSlot {
             tally.add(new TallyCell(showing, truth, decided, Recognition.UNFAMILIAR), judged.unfamiliar[m]);
         }
         tally.add(TallyCell.noSignal(showing, truth), noSignal);
+        long strange = Arrays.stream(judged.unfamiliar).sum();
+        judged.binned.forEach(
+                (duty, one) -> tallies.scores(duty, side).add(showing, truth, one.bins, strange, noSignal));
     }
 }

@@ -3,6 +3,8 @@ package turnstone.spark;
 import java.io.Serializable;
 import java.util.EnumMap;
 import java.util.Map;
+import java.util.TreeMap;
+import turnstone.trial.ScoreHistogram;
 import turnstone.trial.Side;
 import turnstone.trial.TrialForm;
 import turnstone.trial.TrialTally;
@@ -13,6 +15,7 @@ public final class TrialTallies implements Serializable {
 
     private final EnumMap<TrialForm, EnumMap<Side, TrialTally>> tallies = new EnumMap<>(TrialForm.class);
     private final EnumMap<TrialForm, Long> notTried = new EnumMap<>(TrialForm.class);
+    private final TreeMap<String, EnumMap<Side, ScoreHistogram>> scores = new TreeMap<>();
     private final RecordCounts counts;
 
     TrialTallies(int quarantineKept) {
@@ -30,6 +33,12 @@ public final class TrialTallies implements Serializable {
     /** The tally of a form and side; empty in the side in service where nothing is. */
     public TrialTally tally(TrialForm form, Side side) {
         return tallies.get(form).get(side);
+    }
+
+    /** Scores for a duty that fixes a figure, of this fleet; of nothing where the duty was not asked for. */
+    public ScoreHistogram scores(String duty, Side side) {
+        return scores.computeIfAbsent(duty, name -> new EnumMap<>(Side.class))
+                .computeIfAbsent(side, one -> ScoreHistogram.empty());
     }
 
     /** Records without a pair of models in this form. */
@@ -51,6 +60,8 @@ public final class TrialTallies implements Serializable {
             form.getValue().forEach((side, tally) -> tally(form.getKey(), side).merge(tally));
             addNotTried(form.getKey(), other.notTried(form.getKey()));
         }
+        other.scores.forEach((duty, sides) ->
+                sides.forEach((side, histogram) -> scores(duty, side).merge(histogram)));
         counts.merge(other.counts);
     }
 }

@@ -2,6 +2,10 @@ package turnstone.trial;
 
 import java.io.Serializable;
 import java.util.List;
+import java.util.Optional;
+import java.util.Set;
+import java.util.TreeSet;
+import java.util.stream.Collectors;
 import turnstone.plant.Duty;
 
 /**
@@ -22,19 +26,27 @@ public final class EjectScore implements Serializable {
 
     /** For a duty and the materials of a model, in the model's order. */
     public static EjectScore of(Duty duty, List<String> materials) {
+        return of(ejected(duty, materials), materials)
+                .orElseThrow(() -> new IllegalArgumentException(
+                        "duty " + duty.name() + " ejects every material of the model, or no material of it"));
+    }
+
+    /** For the names of the materials that are ejected; empty where they are all of the model's, or none, so that no score tells them apart. */
+    public static Optional<EjectScore> of(Set<String> ejected, List<String> materials) {
         boolean[] ejects = new boolean[materials.size()];
-        boolean some = false;
-        boolean all = true;
+        int count = 0;
         for (int k = 0; k < ejects.length; k++) {
-            ejects[k] = Sendings.ejects(duty, materials.get(k));
-            some |= ejects[k];
-            all &= ejects[k];
+            ejects[k] = ejected.contains(materials.get(k));
+            count += ejects[k] ? 1 : 0;
         }
-        if (!some || all) {
-            throw new IllegalArgumentException(
-                    "duty " + duty.name() + " ejects " + (some ? "every" : "no") + " material of the model");
-        }
-        return new EjectScore(ejects);
+        return count == 0 || count == ejects.length ? Optional.empty() : Optional.of(new EjectScore(ejects));
+    }
+
+    /** Those of these materials that a duty ejects. */
+    public static Set<String> ejected(Duty duty, List<String> materials) {
+        return materials.stream()
+                .filter(material -> Sendings.ejects(duty, material))
+                .collect(Collectors.toCollection(TreeSet::new));
     }
 
     /**

@@ -53,7 +53,7 @@ final class Figures {
     static TrialTallies tallies(
             SmallPlant small, Plant plant, LocalDate date, TrialModels models, Set<String> without) {
         Day day = Day.open(small.session(), plant, date, without);
-        return TrialJob.run(day.source(), day.intake(), models, 0);
+        return TrialJob.run(day.source(), day.intake(), models, Map.of(), 0);
     }
 
     /** Of the records of each material the share decided as it, no signal in the denominator; the mean over materials. */

@@ -2,11 +2,14 @@ package turnstone.spark;
 
 import static org.assertj.core.api.Assertions.assertThat;
 
+import com.fasterxml.jackson.databind.JsonNode;
 import java.nio.file.Path;
 import java.time.LocalDate;
 import java.util.ArrayList;
 import java.util.List;
+import java.util.Map;
 import java.util.Optional;
+import java.util.Set;
 import java.util.SortedMap;
 import java.util.TreeMap;
 import org.junit.jupiter.api.Test;
@@ -24,6 +27,8 @@ import turnstone.moments.Moments;
 import turnstone.plant.Plant;
 import turnstone.sample.SamplePlant;
 import turnstone.sample.SampleSize;
+import turnstone.trial.Recognition;
+import turnstone.trial.ScoreHistogram;
 import turnstone.trial.Side;
 import turnstone.trial.TallyCell;
 import turnstone.trial.TrialForm;
@@ -49,6 +54,9 @@ class PlantJobsTest {
         MadeFrom from = new MadeFrom(List.of(), List.of(), Optional.empty(), List.of());
         return Model.of(fit, ModelContext.of("fleet", channels, plant.countScale(), from));
     }
+
+    /** The first bin on the side of what is ejected; docs/trial.md. */
+    private static final int NEAREST = 289;
 
     @Test
     void aNightIsMadeFoldedAndTriedWithEveryRecordCounted(Session session) {
@@ -76,13 +84,30 @@ class PlantJobsTest {
         for (int group = 0; group < 4; group++) {
             builder.thisFleet(group, model, Optional.of(model));
         }
-        TrialTallies tallies = TrialJob.run(source, intake, builder.build(), 10);
+        TrialTallies tallies = TrialJob.run(source, intake, builder.build(), Map.of("PET", Set.of("PET bottle")), 10);
         long judged = counts.accepted() + counts.noSignal();
         TrialTally tally = tallies.tally(TrialForm.THIS_FLEET, Side.CANDIDATE);
         assertThat(tally.records() + tallies.notTried(TrialForm.THIS_FLEET)).isEqualTo(judged);
         assertThat(tally.records()).isPositive();
         assertThat(tallies.tally(TrialForm.THIS_FLEET, Side.IN_SERVICE)).isEqualTo(tally);
         assertThat(tallies.notTried(TrialForm.MACHINE_NOT_SEEN)).isEqualTo(judged);
+        // The cut that is the decision for the nearest material ejects just the familiar records decided to be ejected.
+        ScoreHistogram scores = tallies.scores("PET", Side.CANDIDATE);
+        assertThat(scores.records()).isEqualTo(tally.records());
+        assertThat(tallies.scores("PET", Side.IN_SERVICE).json()).isEqualTo(scores.json());
+        long ejected = 0;
+        for (JsonNode row : scores.json().path("rows")) {
+            for (JsonNode bin : row.get(4)) {
+                ejected += bin.get(0).intValue() >= NEAREST ? bin.get(1).longValue() : 0;
+            }
+        }
+        long decided = tally.cells().entrySet().stream()
+                .filter(cell -> cell.getKey().recognition() == Recognition.FAMILIAR
+                        && cell.getKey().decided().equals("PET bottle"))
+                .mapToLong(Map.Entry::getValue)
+                .sum();
+        assertThat(decided).isPositive();
+        assertThat(ejected).isEqualTo(decided);
         TreeMap<String, Long> byShowing = new TreeMap<>();
         tally.cells().forEach((TallyCell cell, Long n) -> byShowing.merge(cell.showing(), n, Long::sum));
         byShowing.forEach((showing, n) -> assertThat(n)
