@@ -183,7 +183,7 @@ public final class FoldBench {
                 CountScale.uniform(channels, BigDecimal.ONE, new BigDecimal("0.00001"), Precision.COARSE);
         FoldResult result =
                 FoldJob.run(source, IntakeSpec.table(HeadSpec.none(channels), scale), FoldSettings.usual());
-        if (result.counts().accepted() != records / PARTS * PARTS) {
+        if (result.counts().accepted() != (long) (records / PARTS) * PARTS) {
             throw new IllegalStateException("records are missing: " + result.counts().accepted());
         }
     }
