@@ -119,7 +119,8 @@ final class VerifyCommand implements Callable<Integer> {
             console.json(result);
         } else if (problems.isEmpty()) {
             console.say("every file of the ledger (" + ledger.days().size() + " days) and the shelf ("
-                    + shelf.history().size() + " changes) is what was written");
+                    + shelf.history().size() + (shelf.history().size() == 1 ? " change" : " changes")
+                    + ") is what was written");
         } else {
             problems.forEach(problem -> console.say(problem.toString()));
         }
