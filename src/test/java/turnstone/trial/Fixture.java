@@ -30,8 +30,8 @@ final class Fixture {
         return showing(LocalDate.of(2026, 3, 13), sorter, material, pet, pp, unfamiliar, noSignal);
     }
 
-    private Fixture showing(
-            LocalDate day, String sorter, String material, long pet, long pp, long unfamiliar, long noSignal) {
+    /** The same on a day. */
+    Fixture showing(LocalDate day, String sorter, String material, long pet, long pp, long unfamiliar, long noSignal) {
         String id = "s" + (100 + showings.size());
         showings.add(new TrialShowing(id, day, sorter, sorter + "@2026-01-01", material + "-1", 1, material));
         tally.add(new TallyCell(id, material, "PET", Recognition.FAMILIAR), pet);
